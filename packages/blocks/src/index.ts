@@ -1,0 +1,1 @@
+export { dimensions } from '@tailpair/core/block';

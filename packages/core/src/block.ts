@@ -1,0 +1,2 @@
+export type { Dimension } from './quantity/dimension.ts';
+export { dimensions } from './quantity/dimension.ts';
