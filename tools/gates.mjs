@@ -1,16 +1,20 @@
-// Runs the package scripts that guard the repository: the static gates in two lanes side by side, then the tests.
+// Runs the package scripts that guard the repository, quick and static ones first, two lanes side by side.
 // `npm test -- lint boundaries` runs only those named.
 import { spawn } from 'node:child_process';
 import { fileURLToPath } from 'node:url';
 
 const root = fileURLToPath(new URL('..', import.meta.url));
-const lanes = [
-  ['build', 'typecheck', 'package'],
-  ['lint', 'boundaries', 'unused'],
+const live = 'unit';
+const phases = [
+  [['build'], ['lint', 'boundaries']],
+  [
+    ['typecheck', 'package'],
+    ['unused', 'docs:check'],
+  ],
+  [[live]],
 ];
-const afterLanes = ['docs:check', 'unit'];
 const named = process.argv.slice(2);
-const all = [...lanes.flat(), ...afterLanes];
+const all = phases.flat(2);
 const unknown = named.filter((gate) => !all.includes(gate));
 
 if (unknown.length > 0) {
@@ -20,14 +24,14 @@ if (unknown.length > 0) {
 
 let failure = 0;
 
-/** Runs one gate; its output is held back until it fails, unless `live`. */
-function run(gate, live) {
+/** Runs one gate; its output is held back until it fails, unless it is the live one. */
+function run(gate) {
   const started = performance.now();
   const output = [];
   const child = spawn(`npm run --silent ${gate}`, {
     cwd: root,
     shell: true,
-    stdio: live ? ['ignore', 'inherit', 'inherit'] : ['ignore', 'pipe', 'pipe'],
+    stdio: gate === live ? ['ignore', 'inherit', 'inherit'] : ['ignore', 'pipe', 'pipe'],
   });
   child.stdout?.on('data', (data) => output.push(data));
   child.stderr?.on('data', (data) => output.push(data));
@@ -44,13 +48,11 @@ function run(gate, live) {
 }
 
 /** Runs gates one after another until any gate anywhere fails. */
-async function sequence(gates, live = false) {
+async function runLane(gates) {
   for (const gate of gates) {
-    if (failure === 0 && (named.length === 0 || named.includes(gate))) await run(gate, live);
+    if (failure === 0 && (named.length === 0 || named.includes(gate))) await run(gate);
   }
 }
 
-await Promise.all(lanes.map((lane) => sequence(lane)));
-await sequence(['docs:check']);
-await sequence(['unit'], true);
+for (const lanes of phases) await Promise.all(lanes.map(runLane));
 process.exitCode = failure;
