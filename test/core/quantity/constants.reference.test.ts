@@ -7,8 +7,8 @@ import {
   zeroCelsius,
 } from '../../../packages/core/src/quantity/constants.ts';
 
-// test/reference/thermal-voltage/SOURCE.md. Twenty times the rounding of one double operation: two
-// operations here, one in reading the table.
+// test/reference/thermal-voltage/SOURCE.md. Each double operation rounds by at most 1.1e-16 and five
+// at most are chained; a constant wrong in its last printed digit would show at 1e-10.
 const relative = 1e-14;
 
 const rows = readFileSync(
