@@ -4,12 +4,13 @@
  * @packageDocumentation
  */
 
-export { fitTones, type Tone, type ToneFit } from './analysis/fit-tones.ts';
+export { dc } from './analysis/dc.ts';
+export type { Tone } from './analysis/fit-lines.ts';
+export { fitTones, type ToneFit } from './analysis/fit-tones.ts';
 export type { Frequency } from './analysis/frequency.ts';
 export { type Harmonic, type HarmonicsOptions, harmonics } from './analysis/harmonics.ts';
-export { thd, thdR } from './analysis/thd.ts';
-export { type Sideband, type SidebandsOptions, sidebands } from './analysis/sidebands.ts';
-export { type ModulationDepthOptions, modulationDepth } from './analysis/modulation-depth.ts';
 export { level } from './analysis/level.ts';
+export { type ModulationDepthOptions, modulationDepth } from './analysis/modulation-depth.ts';
 export { peak } from './analysis/peak.ts';
-export { dc } from './analysis/dc.ts';
+export { type Sideband, type SidebandsOptions, sidebands } from './analysis/sidebands.ts';
+export { thd, thdR } from './analysis/thd.ts';

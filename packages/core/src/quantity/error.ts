@@ -26,6 +26,7 @@ export const errorCodes = {
   'record-short': 'a record is too short for the measurement',
   'record-invalid': 'a record cannot be measured as asked',
   'wave-format': 'a sound file cannot be written or read as asked',
+  'file-system': 'a file cannot be read or written',
 } as const;
 
 /** Stable code of a fault, one of {@link errorCodes}. */
