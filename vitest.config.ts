@@ -7,5 +7,6 @@ export default defineConfig({
   test: {
     include: ['test/**/*.test.ts'],
     exclude: ['test/long/**'],
+    testTimeout: 30_000,
   },
 });

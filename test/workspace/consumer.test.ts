@@ -74,7 +74,7 @@ test('an installed package offers the names of its source', async () => {
   for (const { specifier, source } of entries) {
     expect(offered[specifier], specifier).toEqual(Object.keys(await import(source)));
   }
-}, 60_000);
+});
 
 test('a project type-checks against the installed declarations, library checks on', () => {
   const imports = entries.map(({ specifier }, index) => `import * as entry${index} from '${specifier}';`);
@@ -88,4 +88,4 @@ test('a project type-checks against the installed declarations, library checks o
       project,
     );
   }
-}, 60_000);
+});
