@@ -6,7 +6,6 @@ export default defineConfig({
   ssr: { resolve: { conditions: ['@tailpair/source', ...defaultServerConditions] } },
   test: {
     include: ['test/**/*.test.ts'],
-    exclude: ['test/long/**'],
     testTimeout: 30_000,
   },
 });
