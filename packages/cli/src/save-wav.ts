@@ -1,4 +1,3 @@
-import type { FileHandle } from 'node:fs/promises';
 import {
   dimensions,
   formatQuantity,
@@ -58,8 +57,8 @@ const blockLength = 16_384;
  * Caution: loud or unexpected sound can damage hearing. Turn the level down before you listen.
  *
  * @throws TailpairError `wave-format` for traces that do not fit together or options that no WAV file can
- * hold, `value-range` for a full scale not above 0, `record-short` and `record-invalid` for an empty trace or samples that are not finite, `file-system`
- * where the file cannot be written.
+ * hold, `value-range` for a full scale not above 0, `record-short` and `record-invalid` for an empty trace
+ * or samples that are not finite, `file-system` where the file cannot be written.
  * @example await saveWav('out/foghorn.wav', traces.load.out, { fullScale: '10 V' })
  */
 export async function saveWav(
@@ -81,19 +80,17 @@ export async function saveWav(
     channels: channels.length,
     encoding,
     fullScale,
-    ...(options.dither === undefined ? {} : { dither: options.dither }),
-    ...(options.seed === undefined ? {} : { seed: options.seed }),
+    dither: options.dither,
+    seed: options.seed,
   });
   const end = await replaceFile(path, async (file) => {
-    await append(file, encoder.header);
+    await file.appendFile(encoder.header);
     for (let from = 0; from < first.samples.length; from += blockLength) {
-      await append(
-        file,
-        encoder.encode(channels.map(({ samples }) => samples.subarray(from, from + blockLength))),
-      );
+      const block = channels.map(({ samples }) => samples.subarray(from, from + blockLength));
+      await file.appendFile(encoder.encode(block));
     }
     const last = encoder.finish();
-    await append(file, last.padding);
+    await file.appendFile(last.padding);
     await file.write(last.header, 0, last.header.length, 0);
     return last;
   });
@@ -108,18 +105,14 @@ export async function saveWav(
   };
 }
 
-async function append(file: FileHandle, bytes: Uint8Array): Promise<void> {
-  await file.appendFile(bytes);
-}
-
 function requireOneClock(traces: readonly Trace[]): Trace {
   const [first, ...rest] = traces;
   if (first === undefined) throw fault('there is no trace to save; give at least one');
   for (const trace of rest) {
     const fits =
       trace.rate === first.rate && trace.unit === first.unit && trace.samples.length === first.samples.length;
-    if (!fits)
-      throw fault(`${describe(trace)} does not fit ${describe(first)}; channels share rate, unit and length`);
+    if (fits) continue;
+    throw fault(`${describe(trace)} does not fit ${describe(first)}; channels share rate, unit and length`);
   }
   return first;
 }
@@ -141,8 +134,9 @@ function warningsOn(traces: readonly Trace[], largest: number, clipped: number):
   const { unit } = traces[0]!;
   const show = (value: number): string => formatQuantity(value, unit);
   const warnings: string[] = [];
-  if (largest < faint[unit])
+  if (largest < faint[unit]) {
     warnings.push(`the peak is ${show(largest)}, below ${show(faint[unit])}: hardly a signal`);
+  }
   if (clipped > 0) warnings.push(`${clipped} samples are limited to full scale; give a larger full scale`);
   for (const trace of traces) {
     const offset = dc(trace);

@@ -60,9 +60,7 @@ export function harmonics(trace: Trace, options: HarmonicsOptions): readonly Har
       { where },
     );
   }
-  return tones
-    .slice(0, highest)
-    .map(
-      (tone, index): Harmonic => ({ order: index + 1, ...tone, dBc: decibels(tone.amplitude / reference) }),
-    );
+  return tones.slice(0, highest).map(({ frequency, amplitude, phase }, index): Harmonic => {
+    return { order: index + 1, frequency, amplitude, dBc: decibels(amplitude / reference), phase };
+  });
 }

@@ -65,16 +65,9 @@ export function sidebands(trace: Trace, options: SidebandsOptions): readonly Sid
   const others = modulationProducts(carrier, modulator, orders + spareOrders, trace.rate).filter(
     (line) => !inTable(line),
   );
-  const measured = table.map((line) => line.frequency);
-  const { tones } = fitLines(
-    trace,
-    accompany(
-      trace,
-      measured,
-      others.map((line) => line.frequency),
-    ),
-    where,
-  );
+  const frequenciesOf = (lines: readonly ModulationProduct[]): number[] =>
+    lines.map((line) => line.frequency);
+  const { tones } = fitLines(trace, accompany(trace, frequenciesOf(table), frequenciesOf(others)), where);
 
   const reference = tones[orders]!.amplitude;
   if (reference === 0) {

@@ -27,11 +27,10 @@ const gridSlack = 1e-6;
  * @example cut(traces.load.out, { from: '0.5 s', length: '1 s' })
  */
 export function cut(trace: Trace, options: CutOptions): Trace {
+  const where = 'cut';
   const { rate, start, samples } = trace;
   if (options.to !== undefined && options.length !== undefined) {
-    throw new TailpairError('value-range', 'both to and length are given; leave one of them out', {
-      where: 'cut',
-    });
+    throw new TailpairError('value-range', 'both to and length are given; leave one of them out', { where });
   }
   const end = start + durationOf(trace);
   const from = options.from === undefined ? start : seconds(options.from, 'cut.from');
@@ -39,24 +38,22 @@ export function cut(trace: Trace, options: CutOptions): Trace {
   if (options.to !== undefined) to = seconds(options.to, 'cut.to');
   if (options.length !== undefined) to = from + seconds(options.length, 'cut.length');
 
-  const indexOf = (time: number, where: string): number => {
+  const indexOf = (time: number, option: string): number => {
     const index = Math.ceil((time - start) * rate - gridSlack);
     if (index >= 0 && index <= samples.length) return index;
     throw new TailpairError(
       'value-range',
       `${show(time)} lies outside the trace, which spans ${show(start)} to ${show(end)}`,
-      { where },
+      { where: `${where}.${option}` },
     );
   };
-  const first = indexOf(from, 'cut.from');
-  const last = indexOf(to, options.length === undefined ? 'cut.to' : 'cut.length');
+  const first = indexOf(from, 'from');
+  const last = indexOf(to, options.length === undefined ? 'to' : 'length');
   if (last <= first) {
     throw new TailpairError(
       'record-short',
       `no sample of ${trace.name} lies between ${show(from)} and ${show(to)}; choose a longer part`,
-      {
-        where: 'cut',
-      },
+      { where },
     );
   }
   return { ...trace, start: start + first / rate, samples: samples.subarray(first, last) };

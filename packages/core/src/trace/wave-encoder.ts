@@ -10,9 +10,9 @@ export interface WaveOptions extends WaveFormat {
   /** Value that becomes digital full scale, ±1, in the unit of the samples; above 0. */
   readonly fullScale: number;
   /** Whether integers get triangular dither; on unless turned off. Floating point never does. */
-  readonly dither?: boolean;
+  readonly dither?: boolean | undefined;
   /** Seed of the dither; 1 unless given. */
-  readonly seed?: number;
+  readonly seed?: number | undefined;
 }
 
 /** What the end of a file needs, and what happened on the way. */
