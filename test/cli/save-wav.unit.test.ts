@@ -1,8 +1,8 @@
 import { mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { saveWav } from '@tailpair/cli/node';
-import type { Trace } from '@tailpair/core';
+import { saveWav, streamWav } from '@tailpair/cli/node';
+import { cut, type Trace } from '@tailpair/core';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { readWave } from '../core/trace/read-wave.ts';
 
@@ -117,6 +117,44 @@ describe('saveWav', () => {
     await saveWav(join(taken, 'inside.wav'), trace);
     await expect(saveWav(taken, trace)).rejects.toMatchObject({ code: 'file-system' });
     expect((await readdir(place)).sort()).toEqual(['file', 'folder.wav']);
+  });
+
+  test('takes traces in pieces and writes the same file', async () => {
+    const [whole, streamed] = [join(folder, 'whole.wav'), join(folder, 'streamed.wav')];
+    const options = { fullScale: '5 V', encoding: 'pcm16', seed: 7 } as const;
+    async function* pieces(): AsyncGenerator<Trace> {
+      for (let from = 0; from < trace.samples.length; from += 777) {
+        const to = Math.min(from + 777, trace.samples.length);
+        yield cut(trace, { from: from / trace.rate, to: to / trace.rate });
+      }
+    }
+    const saved = await saveWav(whole, trace, options);
+    expect(await streamWav(streamed, pieces(), options)).toEqual({ ...saved, path: streamed });
+    expect(await readFile(streamed)).toEqual(await readFile(whole));
+  });
+
+  test('passes on what the pieces throw, and leaves nothing behind', async () => {
+    const place = await mkdtemp(join(folder, 'throw-'));
+    async function* pieces(): AsyncGenerator<Trace> {
+      yield trace;
+      throw new Error('stopped');
+    }
+    await expect(streamWav(join(place, 'a.wav'), pieces(), { fullScale: 1 })).rejects.toThrowError('stopped');
+    await expect(streamWav(join(place, 'b.wav'), [], { fullScale: 1 })).rejects.toMatchObject({
+      code: 'wave-format',
+    });
+    await expect(
+      streamWav(join(place, 'c.wav'), [trace, [trace, trace]], { fullScale: 1 }),
+    ).rejects.toThrowError(/2 traces follows one of 1/);
+    expect(await readdir(place)).toEqual([]);
+  });
+
+  test('refuses samples that are not there or not finite', async () => {
+    const path = join(folder, 'no.wav');
+    const [empty, broken] = [{ ...trace, samples: new Float64Array(0) }, map((v) => v / 0)];
+    await expect(saveWav(path, empty)).rejects.toMatchObject({ code: 'record-short' });
+    await expect(saveWav(path, empty, { fullScale: 1 })).rejects.toMatchObject({ code: 'wave-format' });
+    await expect(saveWav(path, broken, { fullScale: 1 })).rejects.toMatchObject({ code: 'not-finite' });
   });
 
   test('refuses traces that do not fit together', async () => {

@@ -4,4 +4,5 @@
  * @packageDocumentation
  */
 
-export { type SavedWav, type SaveWavOptions, saveWav } from './save-wav.ts';
+export { type SaveWavOptions, type StreamWavOptions, saveWav, streamWav } from './save-wav.ts';
+export type { SavedWav, WavOptions } from './write-wav.ts';
