@@ -16,8 +16,23 @@ const dimension = (volt: number, ampere: number, second: number, kelvin: number)
   kelvin,
 });
 
+/** Names of {@link dimensions}. */
+export type DimensionName =
+  | 'ratio'
+  | 'voltage'
+  | 'current'
+  | 'time'
+  | 'temperature'
+  | 'frequency'
+  | 'resistance'
+  | 'conductance'
+  | 'capacitance'
+  | 'power'
+  | 'frequencyPerVolt'
+  | 'perKelvin';
+
 /** The dimensions that have a name of their own. */
-export const dimensions = {
+export const dimensions: Readonly<Record<DimensionName, Dimension>> = {
   ratio: dimension(0, 0, 0, 0),
   voltage: dimension(1, 0, 0, 0),
   current: dimension(0, 1, 0, 0),
@@ -30,7 +45,7 @@ export const dimensions = {
   power: dimension(1, 1, 0, 0),
   frequencyPerVolt: dimension(-1, 0, -1, 0),
   perKelvin: dimension(0, 0, 0, -1),
-} as const satisfies Record<string, Dimension>;
+};
 
 /** Whether two dimensions are the same. */
 export function sameDimension(a: Dimension, b: Dimension): boolean {
