@@ -1,5 +1,5 @@
-import { amperes, current, defineBlock, exp, isZero, log, node, ratio } from '@tailpair/core/block';
-import { logOmega, saturationCurrent } from './shared/diode.ts';
+import { amperes, current, defineBlock, isZero, log, node, ratio } from '@tailpair/core/block';
+import { saturationCurrent, wrightOmega } from './shared/diode.ts';
 
 /**
  * The bias pin of a cell: diodes above the negative rail. With the resistors that come in taken
@@ -32,6 +32,6 @@ export const bias = defineBlock({
       .div(perDecay)
       .add(log(saturation.div(perDecay)));
     const y = arriving.div(perDecay).add(still);
-    return { out: exp(logOmega(y)).mul(perDecay).sub(saturation).max('0 A') };
+    return { out: wrightOmega(y).mul(perDecay).sub(saturation).max('0 A') };
   },
 });

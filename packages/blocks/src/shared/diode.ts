@@ -17,13 +17,16 @@ export function saturationCurrent(
 }
 
 /**
- * Logarithm of the Wright omega function: the z with e^z + z = y, where ω(y) = e^z solves
- * ω + ln ω = y (R. Corless, D. Jeffrey, "The Wright ω function", 2002,
- * doi:10.1007/3-540-45470-5_10). In this form nothing overflows, however large y is.
+ * Wright omega function: the ω > 0 with ω + ln ω = y (R. Corless, D. Jeffrey, "The Wright ω
+ * function", 2002, doi:10.1007/3-540-45470-5_10). It is solved for z = ln ω, in which form nothing
+ * overflows, however large y is; the search starts on the asymptotic series z ≈ L − L/y −
+ * L(L − 2)/2y², L = ln y, and for small y on y itself.
  */
-export function logOmega(y: Expression): Expression {
-  // From 1 on the root lies near ln y, one Newton step below it; for small y it is y itself.
+export function wrightOmega(y: Expression): Expression {
   const large = y.max(1);
-  const guess = select(y.lt(1), y.min(0), log(large).mul(large.div(large.add(1))));
-  return solve((z) => exp(z).add(z).sub(y), guess);
+  const l = log(large);
+  const series = l.sub(l.div(large).mul(constant(1).add(l.sub(2).div(large.mul(2)))));
+  const z = solve((z) => exp(z).add(z).sub(y), select(y.lt(1), y.min(0), series));
+  // Where ω is not small it is y − z, which saves an exponential; where it is, that would cancel.
+  return select(y.lt(1), exp(z), y.sub(z));
 }

@@ -62,11 +62,9 @@ export class Machine {
   }
 
   private requireFinite({ name, values, unit }: OutputBuffers, from: number, to: number): void {
-    let sum = 0;
-    for (let n = from; n < to; n++) sum += values[n]! - values[n]!;
-    if (sum === 0) return;
     let first = from;
-    while (Number.isFinite(values[first]!)) first += 1;
+    while (first < to && Number.isFinite(values[first]!)) first += 1;
+    if (first === to) return;
     const time = (this.clock.base + first) * this.clock.period;
     throw new TailpairError(
       'not-finite',

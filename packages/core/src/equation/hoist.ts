@@ -1,8 +1,8 @@
-import { Expression, leaf } from './expression.ts';
+import { constant, Expression, leaf } from './expression.ts';
 import type { EquationNode } from './node.ts';
 import type { Slot } from './program.ts';
 import { substitute } from './substitute.ts';
-import { variabilityOf } from './variability.ts';
+import { type Variability, variabilityOf } from './variability.ts';
 
 /** Collects the values that need computing once only. */
 export interface Hoister {
@@ -10,6 +10,15 @@ export interface Hoister {
   hoist<T extends EquationNode>(root: T): T;
   readonly fixed: readonly Slot[];
   readonly cached: readonly Slot[];
+}
+
+/** A quotient by something that seldom changes is a product with its reciprocal, which is hoisted. */
+function withReciprocals(root: EquationNode, variability: (node: EquationNode) => Variability): EquationNode {
+  return replaceLargest(root, (node) => {
+    const [a, b] = node.args as readonly Expression[];
+    if (node.op !== 'div' || variability(node) !== 'sample' || variability(b!) === 'sample') return undefined;
+    return (withReciprocals(a!, variability) as Expression).mul(constant(1).div(b!));
+  });
 }
 
 /**
@@ -42,7 +51,7 @@ export function hoister(): Hoister {
     cached,
     hoist: <T extends EquationNode>(root: T): T =>
       fix(
-        replaceLargest(root, (node) =>
+        replaceLargest(withReciprocals(root, variability), (node) =>
           variability(node) === 'event' && node.op !== 'leaf'
             ? keep(cached, 'c', fix(node) as Expression)
             : undefined,

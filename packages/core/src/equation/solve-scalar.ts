@@ -1,4 +1,8 @@
-const mostSteps = 60;
+/** Steps after which an equation counts as not solved. */
+export const mostSteps = 60;
+
+/** Relative size of a step after which, at third order, only the last bits could still move. */
+export const closeEnough = 1e-6;
 
 /**
  * Root of one equation by Halley's method, from exact first and second derivatives (third order;
@@ -17,19 +21,20 @@ export function solveScalar(guess: number, terms: (x: number, out: Float64Array)
     terms(x, out);
     const step = halleyStep(out[0]!, out[1]!, out[2]!);
     x -= step;
-    if (Math.abs(step) <= 1e-6 * Math.abs(x) || step === 0) return x;
+    if (Math.abs(step) <= closeEnough * Math.abs(x) || step === 0) return x;
   }
   return Number.NaN;
 }
 
 /**
- * One step of Halley's method, `r / (s − r·c / 2s)`. Far from the root the correction of the
- * plain Newton step is held within a factor of two, so that a strongly bent residual cannot turn
+ * One step of Halley's method, r·s / (s² − ½r·c). Far from the root the correction of the plain
+ * Newton step r/s is held within a factor of two, so that a strongly bent residual cannot turn
  * the step round.
  */
 export function halleyStep(residual: number, slope: number, curvature: number): number {
   if (residual === 0) return 0;
-  const newton = residual / slope;
-  const bend = 1 - (0.5 * newton * curvature) / slope;
-  return newton / Math.min(Math.max(bend, 0.5), 2);
+  const square = slope * slope;
+  return (
+    (residual * slope) / Math.min(Math.max(square - 0.5 * residual * curvature, 0.5 * square), 2 * square)
+  );
 }

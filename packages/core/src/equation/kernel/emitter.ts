@@ -1,5 +1,6 @@
 import { dependsOn } from '../coupling.ts';
 import type { EquationNode } from '../node.ts';
+import { closeEnough, mostSteps } from '../solve-scalar.ts';
 
 /** Gives a leaf its text in the generated source. */
 export type LeafText = (leaf: EquationNode) => string;
@@ -97,6 +98,8 @@ export class Emitter {
 
   private operation(node: EquationNode): string {
     const [a, b, c] = node.args.map((arg) => this.text(arg));
+    if ((node.op === 'mul' || node.op === 'div') && node.args[1]!.value === 1) return a!;
+    if (node.op === 'mul' && node.args[0]!.value === 1) return b!;
     const sign = operators[node.op];
     if (sign !== undefined) return `(${a} ${sign} ${b})`;
     const call = calls[node.op];
@@ -134,15 +137,23 @@ export class Emitter {
       `let ${root} = ${start};`,
       'for (let i = 0; ; i++) {',
       ...body.lines.map((line) => `  ${line}`),
-      `  const ${step} = lib.halleyStep(${terms.join(', ')});`,
+      ...halleyLines(terms as [string, string, string], step),
       `  ${root} -= ${step};`,
-      `  if (Math.abs(${step}) <= 1e-6 * Math.abs(${root}) || ${step} === 0) break;`,
-      `  if (i === 60) { ${root} = NaN; break; }`,
+      `  if (Math.abs(${step}) <= ${closeEnough} * Math.abs(${root}) || ${step} === 0) break;`,
+      `  if (i === ${mostSteps}) { ${root} = NaN; break; }`,
       '}',
     );
     this.names.set(node, root);
     return root;
   }
+}
+
+/** The text of `halleyStep`, so that the loop calls nothing. */
+function halleyLines([residual, slope, curvature]: [string, string, string], step: string): string[] {
+  return [
+    `  const r = ${residual}, d = ${slope}, q = d * d;`,
+    `  const ${step} = r === 0 ? 0 : r * d / Math.min(Math.max(q - 0.5 * r * ${curvature}, 0.5 * q), 2 * q);`,
+  ];
 }
 
 function number(value: number): string {

@@ -1,13 +1,13 @@
+import { tanh } from '../../numeric/tanh.ts';
 import type { EquationNode } from '../node.ts';
 import type { Program } from '../program.ts';
-import { halleyStep } from '../solve-scalar.ts';
 import { Emitter } from './emitter.ts';
 import type { BackEnd, CellStep, Clock, Formulas, KernelContext, KernelPorts } from './kernel.ts';
 import { loopSource } from './loop-source.ts';
 import type { KernelMemory } from './memory.ts';
 
 /** What generated source may call. */
-const library = { halleyStep, tanh: Math.tanh };
+const library = { tanh };
 
 interface Generated extends Formulas {
   loop(cell: CellStep): (from: number, to: number) => void;

@@ -1,5 +1,6 @@
 import type { EquationNode } from '../node.ts';
 import type { LinearGroup, Program } from '../program.ts';
+import { variabilityOf } from '../variability.ts';
 import { Emitter } from './emitter.ts';
 import { weightsAt } from './linear-weights.ts';
 
@@ -77,16 +78,20 @@ class LoopText {
         `const y${state} = ${w[0]} * x${state} + ${w[1]} * d${g} + ${w[2]} * f${g} + ${w[3]} * e${g} + ${w[4]} * g${g};`,
       );
     });
-    const rises = program.crossings.map(({ expression }, i) => `const r${i} = ${emitter.text(expression)};`);
-    step.push(...emitter.lines, ...rises);
+    const variability = variabilityOf();
+    // What only events can lift over zero is looked at when they happen.
+    const watched = program.crossings.flatMap(({ expression }, i) =>
+      variability(expression) === 'sample' ? [{ i, text: emitter.text(expression) }] : [],
+    );
+    step.push(...emitter.lines, ...watched.map(({ i, text }) => `const r${i} = ${text};`));
 
     const commit = [
       ...states.map((name, i) => `${name} = ${next[i]};`),
       ...groups.flatMap(({ steady }, g) => (steady ? [] : [`d${g} = f${g};`, `e${g} = g${g};`])),
     ];
-    if (rises.length === 0) step.push(...commit);
+    if (watched.length === 0) step.push(...commit);
     else {
-      const hit = rises.map((_, i) => `(r${i} >= 0 && past[${i}] === 0)`).join(' || ');
+      const hit = watched.map(({ i }) => `(r${i} >= 0 && past[${i}] === 0)`).join(' || ');
       step.push(
         `if (${hit}) {`,
         ...memory.map(([name, cell]) => `  ${cell} = ${name};`),
@@ -94,7 +99,7 @@ class LoopText {
         ...memory.map(([name, cell]) => `  ${name} = ${cell};`),
         '  /*reload*/',
         '} else {',
-        ...rises.map((_, i) => `  if (r${i} < 0) past[${i}] = 0;`),
+        ...watched.map(({ i }) => `  if (r${i} < 0) past[${i}] = 0;`),
         ...commit.map((line) => `  ${line}`),
         '}',
       );
