@@ -76,16 +76,42 @@ test('an installed package offers the names of its source', async () => {
   }
 });
 
-test('a project type-checks against the installed declarations, library checks on', () => {
-  const imports = entries.map(({ specifier }, index) => `import * as entry${index} from '${specifier}';`);
-  const uses = entries.map((_, index) => `entry${index}`);
-  writeFileSync(join(project, 'main.ts'), `${imports.join('\n')}\nconsole.log(${uses.join(', ')});\n`);
+const script = `
+  import { constant, currentSource, load, ota } from '@tailpair/blocks';
+  import { patch, simulate, wire } from '@tailpair/core';
+  import { dc } from '@tailpair/core/analysis';
 
-  for (const module of ['nodenext', 'preserve']) {
-    run(
-      process.execPath,
-      [compiler, '--noEmit', '--strict', '--target', 'es2022', '--module', module, 'main.ts'],
-      project,
-    );
+  const stage = patch(
+    {
+      supply: ['-12 V', '12 V'],
+      blocks: {
+        input: constant({ voltage: '10 mV' }),
+        tail: currentSource({ current: '100 uA' }),
+        cell: ota(),
+        drop: load({ resistance: '10k' }),
+      },
+    },
+    ({ input, tail, cell, drop }) => [
+      wire(input.out, cell.plus),
+      wire(tail.out, cell.bias),
+      wire(cell.out, drop.in),
+    ],
+  );
+  const { traces } = await simulate(stage, { length: '10 ms', probes: ['drop.out'] });
+  console.log(dc(traces.drop.out));
+`;
+
+test('a project is compiled against the installed declarations, library checks on, and runs', () => {
+  writeFileSync(join(project, 'main.ts'), script);
+  const imports = entries.map(({ specifier }, index) => `export * as entry${index} from '${specifier}';`);
+  writeFileSync(join(project, 'all.ts'), imports.join('\n'));
+
+  for (const module of ['preserve', 'nodenext']) {
+    const options = ['--strict', '--target', 'es2022', '--module', module];
+    run(process.execPath, [compiler, ...options, 'main.ts', 'all.ts'], project);
   }
+  const volts = Number(run(process.execPath, ['main.js'], project));
+
+  // I·R·tanh(V/2V_T) at 25 °C, V_T = 25.69258 mV; the decimator passes DC to well below a part in a million.
+  expect(volts / (100e-6 * 10e3 * Math.tanh(10 / (2 * 25.69258)))).toBeCloseTo(1, 6);
 });
