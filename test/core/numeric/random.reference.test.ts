@@ -42,7 +42,8 @@ describe.each(['noise', 'pitch', 'offset'])('the stream named %s', (name) => {
       product += value * before;
       before = value;
     }
-    // Products of independent normal draws have variance 1: 3.3 standard deviations, one stream in a thousand.
+    // Products of independent normal draws have variance 1: 3.3 standard deviations, one stream in a
+    // thousand.
     expect(Math.abs(product) / Math.sqrt(count)).toBeLessThan(3.3);
   });
 });

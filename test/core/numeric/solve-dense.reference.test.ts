@@ -2,9 +2,9 @@ import { expect, test } from 'vitest';
 import { solveDense } from '../../../packages/core/src/numeric/solve-dense.ts';
 
 // Sum of the entries of the inverse of the n × n Hilbert matrix: n² (M.-D. Choi, Tricks or treats with the
-// Hilbert matrix, Amer. Math. Monthly 90, 1983, 301–312, doi:10.2307/2975779).
-// A backward stable solver loses condition number × 2^-53; condition numbers 5.2e2 for 3, 4.8e5 for 5 and 1.5e10 for 8
-// (N. J. Higham, Accuracy and Stability of Numerical Algorithms, 2nd ed., 2002, table 28.1).
+// Hilbert matrix, Amer. Math. Monthly 90, 1983, 301–312, doi:10.2307/2975779). A backward stable solver
+// loses condition number × 2^-53; condition numbers 5.2e2 for 3, 4.8e5 for 5 and 1.5e10 for 8 (N. J.
+// Higham, Accuracy and Stability of Numerical Algorithms, 2nd ed., 2002, table 28.1).
 test.each([
   [3, 5.24e2],
   [5, 4.77e5],

@@ -6,8 +6,8 @@ import { HalfBandStage } from './half-band-stage.ts';
 
 const factors = [1, 2, 4, 8, 16, 32];
 
-/** dB. Half a decibel more than promised, for what the design's frequency grid may miss between its points. */
-const rejection = 150.5;
+/** dB: 150 are promised, the rest is what the design may miss between the points of its frequency grid. */
+const rejection = 150.1;
 
 /** Input samples that go through the cascade at a time: enough to make its bookkeeping cheap. */
 const block = 256;
@@ -15,11 +15,12 @@ const block = 256;
 /**
  * Divides the sampling rate by a whole factor, piece by piece.
  *
- * A cascade of half-band filters, each only as steep as its own fold demands: up to the pass edge the gain is 1
- * within 1e-6 (8e-6 dB), and what would fold below the pass edge is rejected by 150 dB. Between pass edge and half
- * the output rate the signal is attenuated, and aliases within that band are let through. Linear phase and no
- * delay: output sample k stands for the instant of input sample k·factor. Before the first input sample the signal
- * is taken as held at its first value. Any division of the input into pieces gives the same bits.
+ * A cascade of half-band filters, each only as steep as its own fold demands: up to the pass edge the gain
+ * is 1 within 1e-6 (8e-6 dB), and what would fold below the pass edge is rejected by 150 dB. Between pass
+ * edge and half the output rate the signal is attenuated, and aliases within that band are let through.
+ * Linear phase and no delay: output sample k stands for the instant of input sample k·factor. Before the
+ * first input sample the signal is taken as held at its first value. Any division of the input into pieces
+ * gives the same bits.
  */
 export class Decimator {
   /** Hz. The larger of 20 kHz and 5/12 of the output rate; below 44.1 kHz always 5/12 of it. */

@@ -1,15 +1,14 @@
-import { type HalfBandKernel, halfBandKernel } from './half-band-kernel.ts';
+import { halveRate } from './halve-rate.ts';
 
 /**
  * One halving of the rate, fed piece by piece. Output k is centred on sample `reach` + 2k of what was fed in,
  * so `reach` samples must come before the first centre. Samples wait in one straight line, moved to its front
- * when it is full, so that the kernel never wraps around.
+ * when it is full, so that the filter never wraps around.
  */
 export class HalfBandStage {
   /** Samples the filter takes on each side of its centre; odd. */
   readonly reach: number;
   readonly #taps: Float64Array;
-  readonly #kernel: HalfBandKernel;
   readonly #line: Float64Array;
   /** The waiting samples: from the first that the next output needs to the last fed in. */
   #start = 0;
@@ -19,7 +18,6 @@ export class HalfBandStage {
   constructor(taps: Float64Array, intake: number) {
     this.reach = 2 * taps.length - 1;
     this.#taps = taps;
-    this.#kernel = halfBandKernel(taps.length);
     this.#line = new Float64Array(2 * this.reach + 4 * intake);
   }
 
@@ -41,16 +39,21 @@ export class HalfBandStage {
 
   /** Writes every output that can be formed, and returns how many. */
   drain(output: Float64Array, at: number): number {
-    const count = Math.max(0, (this.#end - this.#start - 2 * this.reach + 1) >> 1);
-    this.#kernel(this.#taps, this.#line, this.#start + this.reach, count, output, at);
+    const count = this.#due;
+    halveRate(this.#taps, this.#line, this.#start + this.reach, count, output, at);
     this.#start += 2 * count;
     return count;
   }
 
   /** Feeds every output that can be formed to the next stage. */
   drainInto(next: HalfBandStage): void {
-    next.#makeRoom((this.#end - this.#start) >> 1);
+    next.#makeRoom(this.#due);
     next.#end += this.drain(next.#line, next.#end);
+  }
+
+  /** Number of outputs that can be formed. */
+  get #due(): number {
+    return Math.max(0, (this.#end - this.#start - 2 * this.reach + 1) >> 1);
   }
 
   #makeRoom(count: number): void {

@@ -18,8 +18,12 @@ export function halfBandTaps(passEdge: number, rejection: number): Float64Array 
   for (let pairs = 1; ; pairs++) {
     const expected = kaiserRejection(4 * pairs, transition);
     if (expected < rejection) continue;
-    const taps = windowedSinc(pairs, kaiserBeta(expected));
-    if (worstLeak(taps, passEdge) <= 10 ** (-rejection / 20)) return taps;
+    // The formulas are fits: where their β narrows the pass band a little too much, a slightly smaller one
+    // may do.
+    for (let slack = 0; slack <= 2; slack += 0.5) {
+      const taps = windowedSinc(pairs, kaiserBeta(expected - slack));
+      if (worstLeak(taps, passEdge) <= 10 ** (-rejection / 20)) return taps;
+    }
   }
 }
 
@@ -39,16 +43,25 @@ function sumOf(taps: Float64Array): number {
   return taps.reduce((sum, tap) => sum + tap, 0);
 }
 
-/** Worst |1 − H(f)| up to the pass edge, which is the worst |H(½ − f)| too; eight points per lobe. */
+/**
+ * Worst |1 − H(f)| up to the pass edge, which is the worst |H(½ − f)| too; 16 points per lobe miss 0.05 dB.
+ */
 function worstLeak(taps: Float64Array, passEdge: number): number {
-  const points = 8 * taps.length;
+  const points = 16 * taps.length;
   let worst = 0;
   for (let i = 0; i <= points; i++) {
     const angle = (2 * Math.PI * passEdge * i) / points;
+    // cos((2j + 1)·angle) by its recurrence over j: a tenth of the time of the cosines themselves.
+    const twice = 2 * Math.cos(2 * angle);
+    let before = Math.cos(angle);
+    let cosine = before;
     let gain = 0.5;
-    taps.forEach((tap, j) => {
-      gain += 2 * tap * Math.cos(angle * (2 * j + 1));
-    });
+    for (const tap of taps) {
+      gain += 2 * tap * cosine;
+      const next = twice * cosine - before;
+      before = cosine;
+      cosine = next;
+    }
     worst = Math.max(worst, Math.abs(1 - gain));
   }
   return worst;

@@ -27,7 +27,10 @@ export function kaiserRejection(order: number, transition: number): number {
   return 7.95 + 2.285 * transition * order;
 }
 
-/** Modified Bessel function I₀ by its power series Σ (x/2)^2k / k!²: every term is positive, so no digit is lost. */
+/**
+ * Modified Bessel function I₀ by its power series Σ (x/2)^2k / k!²: every term is positive, so no digit is
+ * lost.
+ */
 function besselI0(x: number): number {
   const square = (x * x) / 4;
   let term = 1;
