@@ -19,6 +19,7 @@ export {
   states,
 } from './equation/declare.ts';
 export { constant, Expression, type Operand } from './equation/expression.ts';
+export type { EquationNode, LeafRole, LogicOp, NumericOp } from './equation/node.ts';
 export { cos, exp, exp2, floor, log, select, sin, sqrt, tanh } from './equation/functions.ts';
 export { solve } from './equation/solve.ts';
 export { type BlockDefinition, defineBlock } from './block/define-block.ts';
@@ -51,6 +52,7 @@ export {
   type NumberParameter,
   ohms,
   type Parameter,
+  type ParameterValue,
   ratio,
   seconds,
   volts,

@@ -10,6 +10,7 @@ export { type Dimension, type DimensionName, dimensions } from './quantity/dimen
 export { formatQuantity } from './quantity/format-quantity.ts';
 export { type ParseOptions, parseQuantity } from './quantity/parse-quantity.ts';
 export type { Block, BlockKind, Inputs, Outputs, Parameters } from './block/kind.ts';
+export type { ParameterValue } from './block/parameter.ts';
 export type { Surroundings } from './block/surroundings.ts';
 export {
   type Blocks,

@@ -70,6 +70,7 @@ export interface PlainKernelContext {
 
 /** A plain kernel: writes samples `from` … `to − 1` of its outputs. Slot `from − 1` is the sample before. */
 export interface PlainKernel {
+  /** Computes samples `from` … `to − 1` of every output from the inputs. */
   run(from: number, to: number): void;
 }
 
@@ -80,9 +81,13 @@ export interface KindDeclaration {
   readonly inputs: Inputs;
   readonly outputs: Outputs;
   readonly params: Parameters;
+  /** Input and source resistances of ports, given the parameters. */
   readonly resistances?: (values: never) => Readonly<Record<string, Expression | undefined>>;
+  /** Rules between parameters. */
   readonly requires?: (values: never) => readonly Requirement[];
+  /** The physics, unless the kind is a plain kernel. */
   readonly equations?: (symbols: never) => Readonly<Record<string, Expression>>;
+  /** The loop over samples of a kind that is no equation. */
   readonly kernel?: (context: PlainKernelContext) => PlainKernel;
 }
 

@@ -1,13 +1,10 @@
 import type { Trace } from './trace.ts';
 
-type BlockOf<Probe extends string> = Probe extends `${infer Block}.${string}` ? Block : never;
-type PortOf<Probe extends string, Block extends string> = Probe extends `${Block}.${infer Port}`
-  ? Port
-  : never;
-
 /** Traces by block and port: the probe `load.out` is found at `traces.load.out`. */
 export type ProbeTraces<Probe extends string> = {
-  readonly [Block in BlockOf<Probe>]: { readonly [Port in PortOf<Probe, Block>]: Trace };
+  readonly [Block in Probe extends `${infer Name}.${string}` ? Name : never]: {
+    readonly [Port in Probe extends `${Block}.${infer Name}` ? Name : never]: Trace;
+  };
 };
 
 /** Sorts traces by the block and port their names tell. */
