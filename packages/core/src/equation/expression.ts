@@ -34,7 +34,7 @@ export class Expression implements EquationNode {
   readonly name: string;
   readonly role: LeafRole | undefined;
 
-  /** Use {@link constant}, {@link leaf} and the operations instead. */
+  /** Use {@link constant} and the operations instead. */
   constructor(
     op: NumericOp,
     args: readonly EquationNode[],

@@ -38,7 +38,7 @@ export interface WaveEncoder {
 
 /**
  * A streaming encoder of WAV files; knows bytes, not files. Any division into blocks gives the same bytes.
- * See {@link waveHeader} for the form of the file and {@link quantiser} for the dither.
+ * See `waveHeader` for the form of the file and `quantiser` for the dither.
  *
  * @throws TailpairError `wave-format` for what no WAV file can hold, `value-range` for a full scale not above 0, and from `encode` for a block that does
  * not fit the channels; `not-finite` from `encode` for a sample that no file should hold.
