@@ -11,6 +11,7 @@ import {
 } from './expression.ts';
 import { select } from './functions.ts';
 import { withSharedNodes } from './node.ts';
+import { variabilityOf } from './variability.ts';
 
 /** Memory that follows a differential equation. */
 export interface StateDeclaration {
@@ -210,10 +211,12 @@ export function set(target: Expression, value: Operand): Assignment {
 
 /**
  * Whether an expression of parameters is zero in the patch at hand: decided at set-up, so that
- * the equations may take another form (no capacitor, no memory).
+ * the equations may take another form (no capacitor, no memory). An input that is not wired is
+ * zero; anything that moves is not.
  */
 export function isZero(expression: Expression): boolean {
   if (isConstant(expression)) return expression.value === 0;
+  if (variabilityOf()(expression) !== 'set-up') return false;
   const { answers, decide } = record('isZero');
   const answer = answers.get(expression) ?? decide(expression);
   answers.set(expression, answer);
