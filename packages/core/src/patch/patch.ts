@@ -44,8 +44,8 @@ export interface Patch<Probe extends string = string> {
   readonly blocks: readonly PlacedBlock[];
   readonly wires: readonly PlacedWire[];
   readonly warnings: readonly Warning[];
-  /** Never present; carries the names of the outputs in the type. */
-  readonly outputs?: Probe;
+  /** Never present; carries the names of the outputs in the type, so that a patch with more serves where fewer are asked for. */
+  outputs?(name: Probe): void;
 }
 
 /**

@@ -40,6 +40,7 @@ const calls: Readonly<Record<string, string>> = {
   sin: 'Math.sin',
   cos: 'Math.cos',
   tanh: 'lib.tanh',
+  exp2: 'lib.exp2',
 };
 
 /**
@@ -109,8 +110,6 @@ export class Emitter {
         return `(-${a})`;
       case 'not':
         return `!${a}`;
-      case 'exp2':
-        return `Math.exp(${a} * ${number(Math.LN2)})`;
       case 'select':
         return `(${a} ? ${b} : ${c})`;
       default:

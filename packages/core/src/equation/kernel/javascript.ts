@@ -1,3 +1,4 @@
+import { exp2 } from '../../numeric/exp2.ts';
 import { tanh } from '../../numeric/tanh.ts';
 import type { EquationNode } from '../node.ts';
 import type { Program } from '../program.ts';
@@ -7,7 +8,7 @@ import { loopSource } from './loop-source.ts';
 import type { KernelMemory } from './memory.ts';
 
 /** What generated source may call. */
-const library = { tanh };
+const library = { exp2, tanh };
 
 interface Generated extends Formulas {
   loop(cell: CellStep): (from: number, to: number) => void;

@@ -61,6 +61,11 @@ export function linearStep(
   );
 }
 
+/** The step under a drive that does not move. Generated loops add up in the same order. */
+export function steadyStep(weights: Float64Array, at: number, x: number, drive: number): number {
+  return weights[at]! * x + (weights[at + 1]! + weights[at + 2]!) * drive;
+}
+
 /** Where the weights of a group start. */
 export function weightsAt(group: number): number {
   return group * weightsPerGroup;

@@ -3,7 +3,7 @@ import { hermiteValue } from './hermite.ts';
 import { ImplicitRun } from './implicit-run.ts';
 import type { GroupField } from './implicit-step.ts';
 import type { Formulas, KernelContext } from './kernel.ts';
-import { linearStep, linearWeights } from './linear-weights.ts';
+import { linearStep, linearWeights, steadyStep } from './linear-weights.ts';
 import { weightsPerGroup } from './memory.ts';
 import { Point, readInside } from './point.ts';
 
@@ -106,7 +106,10 @@ export class PieceStepper {
         const state = group.states[0];
         linearWeights(memory.rates[index]!, length, weights, 0);
         this.formulas.drive(index, next, end.u, end.s, end.t, nextDrives);
-        next[state] = linearStep(weights, 0, memory.states[state]!, memory.drives, nextDrives, 2 * index);
+        const x = memory.states[state]!;
+        next[state] = group.steady
+          ? steadyStep(weights, 0, x, nextDrives[2 * index]!)
+          : linearStep(weights, 0, x, memory.drives, nextDrives, 2 * index);
       } else {
         readInside(this.context, n, (from + to) / 2, this.middle);
         stiffness = Math.max(stiffness, this.implicitStep(index, length));
