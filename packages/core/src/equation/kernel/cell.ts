@@ -113,12 +113,14 @@ export class CellStepper {
           if (count > mostAtOnce) this.refuseStorm(k, `${mostAtOnce} events fell on one instant`);
           this.formulas.change(k, start.u, start.t);
           this.refresh();
+          this.measure(memory.states, start);
+          this.rearm();
           again = true;
         }
       }
-      this.measure(memory.states, start);
-      this.rearm();
     }
+    this.measure(memory.states, start);
+    this.rearm();
   }
 
   private refuseStorm(crossing: number, much: string): never {
