@@ -50,7 +50,7 @@ test('no text of a patch or a kind gets in', () => {
   const hostile = defineBlock({
     kind: 'hostile',
     summary: '"; process.exit(); //',
-    inputs: { processExit: voltage({ doc: '`${process.exit()}`' }) },
+    inputs: { processExit: voltage({ doc: '`process.exit()`' }) },
     outputs: { out: voltage() },
     params: { evil: volts('1 V', { doc: "');process.exit();('" }), word: choice(['`;', '*/'], '`;') },
     equations: ({ processExit, evil }) => ({ out: processExit.add(evil) }),

@@ -31,7 +31,7 @@ export function solveScalar(guess: number, terms: (x: number, out: Float64Array)
  * Newton step r/s is held within a factor of two, so that a strongly bent residual cannot turn
  * the step round.
  */
-export function halleyStep(residual: number, slope: number, curvature: number): number {
+function halleyStep(residual: number, slope: number, curvature: number): number {
   if (residual === 0) return 0;
   const square = slope * slope;
   return (

@@ -6,7 +6,7 @@ import { closeEnough, mostSteps } from '../solve-scalar.ts';
 export type LeafText = (leaf: EquationNode) => string;
 
 /** How many times each vertex is used by a set of expressions. */
-export function countUses(roots: readonly EquationNode[]): Map<EquationNode, number> {
+function countUses(roots: readonly EquationNode[]): Map<EquationNode, number> {
   const uses = new Map<EquationNode, number>();
   const visit = (node: EquationNode): void => {
     const before = uses.get(node) ?? 0;
