@@ -15,7 +15,9 @@ declare module 'vitest' {
 export function claim(made: Claim): void {
   const error = Math.max(...made.errors.map(Math.abs));
   expect(made.errors, made.what).not.toHaveLength(0);
-  expect(`${made.what}${made.source}${made.because}`, 'a bar would part a cell of the page').not.toContain('|');
+  expect(`${made.what}${made.source}${made.because}`, 'a bar would part a cell of the page').not.toContain(
+    '|',
+  );
   expect(error, made.what).toBeLessThanOrEqual(made.tolerance);
   const topic = basename(expect.getState().testPath!).split('.')[0]!;
   const row = rowOf(topic, made, error);
