@@ -1,4 +1,6 @@
 import { type SetUpBlock, setUpBlock } from '../block/set-up.ts';
+import { findCorners } from '../equation/corners.ts';
+import { EdgeList } from '../equation/kernel/edge-list.ts';
 import type { BackEnd, Clock, Kernel } from '../equation/kernel/kernel.ts';
 import { lower } from '../equation/lower.ts';
 import type { Program } from '../equation/program.ts';
@@ -8,7 +10,7 @@ import { plainValues } from '../patch/read-blocks.ts';
 import { portName } from '../patch/wire.ts';
 import { schedule } from '../schedule/schedule.ts';
 import { blockKernel } from './block-kernel.ts';
-import { type Gather, gather } from './gather.ts';
+import { type Gather, gather, gatherEdges } from './gather.ts';
 import type { OutputBuffers } from './output-buffers.ts';
 import { plainKernel } from './plain-kernel.ts';
 
@@ -34,10 +36,19 @@ interface Lowered extends SetUpBlock {
 
 const nothing = new Float64Array(0);
 
+/** How the blocks of a patch are compiled and joined. */
+export interface AssemblyOptions {
+  /** Samples in a full chunk. */
+  readonly chunk: number;
+  readonly backEnd: BackEnd;
+  /** Whether edges are carried from block to block. */
+  readonly carry: boolean;
+}
+
 /** Compiles the blocks of a patch and joins them by buffers of `chunk` + 1 samples. */
-export function assemble(patch: Patch, clock: Clock, chunk: number, backEnd: BackEnd): Assembly {
+export function assemble(patch: Patch, clock: Clock, { chunk, backEnd, carry }: AssemblyOptions): Assembly {
   const { order } = schedule(patch);
-  const { lowered, slopesOf } = lowerAll(order, patch);
+  const { lowered, slopesOf } = lowerAll(order, patch, carry);
   const outputs = new Map<string, OutputBuffers>();
   const buffers: Float64Array[] = [];
   const allocate = (): Float64Array => {
@@ -48,72 +59,102 @@ export function assemble(patch: Patch, clock: Clock, chunk: number, backEnd: Bac
 
   const stages = order.map((block): Stage => {
     const gathers: Gather[] = [];
-    const input = (sources: readonly Source[], take: (from: OutputBuffers) => Float64Array): Float64Array => {
-      const [only] = sources;
-      if (sources.length === 1 && only!.gain === 1) return take(outputs.get(only!.name)!);
-      const target = allocate();
-      gathers.push(
-        gather(
-          sources.map(({ name, gain }) => ({ buffer: take(outputs.get(name)!), gain })),
-          target,
-        ),
-      );
-      return target;
-    };
     const own = Object.entries(block.declaration.outputs).map(([port, { quantity }]): OutputBuffers => {
       const name = portName({ block: block.name, port });
       const slopes = slopesOf.has(name) ? allocate() : nothing;
-      return { name, unit: quantity === 'voltage' ? 'V' : 'A', values: allocate(), slopes };
+      return {
+        name,
+        unit: quantity === 'voltage' ? 'V' : 'A',
+        values: allocate(),
+        slopes,
+        edges: new EdgeList(),
+      };
     });
+    const input = (sources: readonly Source[], sloped: boolean): InputBuffers => {
+      const from = sources.map(({ name, gain }) => ({ from: outputs.get(name)!, gain }));
+      const [only] = from;
+      if (from.length === 1 && only!.gain === 1) return only!.from;
+      const sum = { values: allocate(), slopes: sloped ? allocate() : nothing, edges: new EdgeList() };
+      const buffers = (key: 'values' | 'slopes'): { buffer: Float64Array; gain: number }[] =>
+        from.map(({ from: source, gain }) => ({ buffer: source[key], gain }));
+      gathers.push(gather(buffers('values'), sum.values));
+      if (sloped) gathers.push(gather(buffers('slopes'), sum.slopes));
+      if (carry) gathers.push(gatherEdges(from, sum.edges, clock));
+      return sum;
+    };
     const ready = lowered.get(block);
-    const kernel =
-      ready === undefined
-        ? plainKernel(
-            block,
-            (port) => input(sourcesOf(patch, block, port), ({ values }) => values),
-            own,
-            clock,
-          )
-        : blockKernel(
-            ready.program,
-            ready.bindings,
-            inputPorts(ready, patch, block, input, own),
-            clock,
-            backEnd,
-          );
+    let kernel: Kernel;
+    if (ready === undefined) {
+      kernel = plainKernel(block, (port) => input(sourcesOf(patch, block, port), false).values, own, clock);
+    } else {
+      const { bound, program } = ready;
+      const inputs = bound.inputs.map(({ port, part }, i) =>
+        input(sourcesOf(patch, block, port, part), program.slopesWanted[i]!),
+      );
+      const ports = {
+        inputs: inputs.map(({ values }) => values),
+        inputSlopes: inputs.map(({ slopes }, i) => (program.slopesWanted[i] ? slopes : nothing)),
+        inputEdges: inputs.map(({ edges }) => edges),
+        outputs: own.map(({ values }) => values),
+        outputSlopes: own.map(({ slopes }) => slopes),
+        outputEdges: own.map(({ edges }) => edges),
+      };
+      kernel = blockKernel(program, ready.bindings, ports, clock, backEnd, carry);
+    }
     for (const output of own) outputs.set(output.name, output);
     return { name: block.name, gathers, kernel, outputs: own };
   });
   return { stages, outputs, buffers };
 }
 
+type InputBuffers = Pick<OutputBuffers, 'values' | 'slopes' | 'edges'>;
+
 /** Lowers all blocks from the last to the first, so that each knows whose slopes are asked of it. */
 function lowerAll(
   order: readonly PlacedBlock[],
   patch: Patch,
+  carry: boolean,
 ): { lowered: ReadonlyMap<PlacedBlock, Lowered>; slopesOf: ReadonlySet<string> } {
+  const ready = new Map<PlacedBlock, SetUpBlock>();
+  const edged = new Set<string>();
+  for (const block of order) {
+    if (block.declaration.equations === undefined) continue;
+    const set = setUp(block, patch);
+    ready.set(block, set);
+    const { crossings, states, outputs } = set.bound.equations;
+    const makes =
+      crossings.length > 0 ||
+      findCorners([...Object.values(outputs), ...states.map(({ slope }) => slope)]).length > 0;
+    if (carry && (makes || takesEdges(block, patch, edged))) edged.add(block.name);
+  }
   const lowered = new Map<PlacedBlock, Lowered>();
   const slopesOf = new Set<string>();
   for (const block of [...order].reverse()) {
-    if (block.declaration.equations === undefined) continue;
-    const ready = setUp(block, patch);
-    const { bound } = ready;
-    const program = lower(bound.equations, {
-      inputs: bound.inputs.map(({ symbol }) => symbol),
-      time: bound.surroundings.time,
+    const set = ready.get(block);
+    if (set === undefined) continue;
+    const edges = takesEdges(block, patch, edged);
+    const program = lower(set.bound.equations, {
+      inputs: set.bound.inputs.map(({ symbol }) => symbol),
+      time: set.bound.surroundings.time,
+      ...(carry ? { carry: { incoming: edges } } : {}),
       slopesOf: new Set(
         Object.keys(block.declaration.outputs).filter((port) =>
           slopesOf.has(portName({ block: block.name, port })),
         ),
       ),
     });
-    bound.inputs.forEach(({ port, part }, i) => {
-      if (program.slopesWanted[i])
-        for (const { name } of sourcesOf(patch, block, port, part)) slopesOf.add(name);
+    set.bound.inputs.forEach(({ port, part }, i) => {
+      const sources = sourcesOf(patch, block, port, part);
+      const wanted = program.slopesWanted[i] || (edges && sources.length > 1);
+      if (wanted) for (const { name } of sources) slopesOf.add(name);
     });
-    lowered.set(block, { ...ready, program });
+    lowered.set(block, { ...set, program });
   }
   return { lowered, slopesOf };
+}
+
+function takesEdges(block: PlacedBlock, { wires }: Patch, edged: ReadonlySet<string>): boolean {
+  return wires.some(({ from, to }) => to.block === block.name && edged.has(from.block));
 }
 
 function setUp(block: PlacedBlock, patch: Patch): SetUpBlock {
@@ -145,25 +186,4 @@ function sourcesOf(patch: Patch, block: PlacedBlock, port: string, part?: 'direc
     name: portName(from),
     gain: via === undefined ? 1 : 1 / via.value,
   }));
-}
-
-type InputOf = (sources: readonly Source[], take: (from: OutputBuffers) => Float64Array) => Float64Array;
-
-function inputPorts(
-  { bound, program }: Lowered,
-  patch: Patch,
-  block: PlacedBlock,
-  input: InputOf,
-  own: readonly OutputBuffers[],
-): Parameters<typeof blockKernel>[2] {
-  return {
-    inputs: bound.inputs.map(({ port, part }) =>
-      input(sourcesOf(patch, block, port, part), ({ values }) => values),
-    ),
-    inputSlopes: bound.inputs.map(({ port, part }, i) =>
-      program.slopesWanted[i] ? input(sourcesOf(patch, block, port, part), ({ slopes }) => slopes) : nothing,
-    ),
-    outputs: own.map(({ values }) => values),
-    outputSlopes: own.map(({ slopes }) => slopes),
-  };
 }

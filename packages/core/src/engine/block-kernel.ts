@@ -4,6 +4,7 @@ import { CellStepper } from '../equation/kernel/cell.ts';
 import type { BackEnd, Clock, Kernel, KernelContext, KernelPorts } from '../equation/kernel/kernel.ts';
 import { kernelMemory } from '../equation/kernel/memory.ts';
 import type { Program, Slot } from '../equation/program.ts';
+import { nextEdge } from './gather.ts';
 
 /**
  * A block's program on memory of its own, ready to run.
@@ -16,9 +17,10 @@ export function blockKernel(
   ports: KernelPorts,
   clock: Clock,
   backEnd: BackEnd,
+  carry: boolean,
 ): Kernel {
   const memory = kernelMemory(program);
-  const context: KernelContext = { program, memory, ports, clock };
+  const context: KernelContext = { program, memory, ports, clock, carry };
   fill(memory.fixed, program.fixed, bindings);
   const formulas = backEnd.formulas(context);
   const stepper = new CellStepper(context, formulas);
@@ -30,7 +32,18 @@ export function blockKernel(
       stepper.settleAt(n);
       formulas.emit(n);
     },
-    run: loop,
+    run: (from, to) => {
+      for (const edges of ports.outputEdges) edges.clear();
+      stepper.rewind();
+      let n = from;
+      for (let edge = nextEdge(ports.inputEdges, n); edge < to; edge = nextEdge(ports.inputEdges, n)) {
+        if (edge > n) loop(n, edge);
+        stepper.step(edge);
+        formulas.emit(edge);
+        n = edge + 1;
+      }
+      if (n < to) loop(n, to);
+    },
   };
 }
 

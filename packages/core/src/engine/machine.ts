@@ -1,16 +1,13 @@
-import type { BackEnd, Clock } from '../equation/kernel/kernel.ts';
+import type { Clock } from '../equation/kernel/kernel.ts';
 import type { Patch } from '../patch/patch.ts';
 import { TailpairError } from '../quantity/error.ts';
-import { type Assembly, assemble, type Stage } from './assemble.ts';
+import { type Assembly, type AssemblyOptions, assemble, type Stage } from './assemble.ts';
 import type { OutputBuffers } from './output-buffers.ts';
 
 /** How a machine is built. */
-export interface MachineOptions {
+export interface MachineOptions extends AssemblyOptions {
   /** Seconds between internal samples. */
   readonly period: number;
-  /** Samples in a full chunk. */
-  readonly chunk: number;
-  readonly backEnd: BackEnd;
 }
 
 /**
@@ -21,9 +18,9 @@ export class Machine {
   readonly clock: Clock;
   private readonly assembly: Assembly;
 
-  constructor(patch: Patch, { period, chunk, backEnd }: MachineOptions) {
-    this.clock = { period, base: 0 };
-    this.assembly = assemble(patch, this.clock, chunk, backEnd);
+  constructor(patch: Patch, options: MachineOptions) {
+    this.clock = { period: options.period, base: 0 };
+    this.assembly = assemble(patch, this.clock, options);
   }
 
   /** Buffers of an output, by its name `block.port`. */

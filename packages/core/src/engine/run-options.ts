@@ -17,6 +17,13 @@ export interface RunOptions<Probe extends string> {
   readonly oversample?: number;
   /** Whether traces are brought down to `rate` (default) or kept at the internal rate, raw. */
   readonly decimate?: boolean;
+  /**
+   * What becomes of steps and corners. `sampled` (default): signals are point samples, and what
+   * their edges fold back is left. `carried`: edges travel with their exact time through every block
+   * and are corrected once, where a probe takes them; exact for paths whose poles stay below about
+   * 16 kHz at 4 × oversampling, no better than sampled behind faster ones.
+   */
+  readonly edges?: 'sampled' | 'carried';
   /** Stops the run when it becomes aborted; an `AbortSignal` will do. */
   readonly signal?: { readonly aborted: boolean };
   /** Internal samples computed at a time, default 128. Changes the speed, never a sample. */
@@ -32,6 +39,7 @@ export interface ReadOptions {
   readonly decimate: boolean;
   readonly chunk: number;
   readonly backEnd: BackEnd;
+  readonly carry: boolean;
 }
 
 /** Reads what the options say about the computation. */
@@ -41,6 +49,7 @@ export function readOptions({
   decimate = true,
   chunk = 128,
   backEnd = 'compiled',
+  edges = 'sampled',
 }: RunOptions<string>): ReadOptions {
   const hertz = parseQuantity(rate, dimensions.frequency, { where: 'rate', bare: true });
   requireRange(hertz, { where: 'rate', above: 0, unit: dimensions.frequency });
@@ -51,12 +60,18 @@ export function readOptions({
       where: 'backEnd',
     });
   }
+  if (edges !== 'sampled' && edges !== 'carried') {
+    throw new TailpairError('value-kind', `must be sampled or carried, got ${String(edges)}`, {
+      where: 'edges',
+    });
+  }
   return {
     rate: hertz,
     oversample,
     decimate,
     chunk,
     backEnd: backEnd === 'compiled' ? javascript : interpreter,
+    carry: edges === 'carried',
   };
 }
 

@@ -1,6 +1,8 @@
 import type { Patch } from '../patch/patch.ts';
 import { TailpairError } from '../quantity/error.ts';
+import { CorrectionKernel } from './correction-kernel.ts';
 import { Decimator } from './decimator.ts';
+import { EdgeCorrector } from './edge-corrector.ts';
 import { Machine } from './machine.ts';
 import type { OutputBuffers } from './output-buffers.ts';
 import { type ReadOptions, unknownProbe } from './run-options.ts';
@@ -8,6 +10,8 @@ import { type ReadOptions, unknownProbe } from './run-options.ts';
 /** A probe at work: where its samples come from and how they are brought to the rate of its trace. */
 interface ProbeTap {
   readonly output: OutputBuffers;
+  /** Corrects the edges, where they are carried. */
+  readonly corrector: EdgeCorrector | undefined;
   readonly decimator: Decimator;
 }
 
@@ -22,23 +26,30 @@ export class Run {
   readonly latency: number;
   private readonly machine: Machine;
   private readonly chunk: number;
+  private readonly corrected: Float64Array;
   private readonly taps: readonly ProbeTap[];
   private started = false;
 
   constructor(patch: Patch, probes: readonly string[], options: ReadOptions) {
-    const { rate, oversample, decimate, chunk, backEnd } = options;
+    const { rate, oversample, decimate, chunk, backEnd, carry } = options;
     const internal = rate * oversample;
     this.chunk = chunk;
     this.stride = decimate ? oversample : 1;
     this.rate = decimate ? rate : internal;
-    this.machine = new Machine(patch, { period: 1 / internal, chunk, backEnd });
+    this.machine = new Machine(patch, { period: 1 / internal, chunk, backEnd, carry });
+    const kernel = carry ? new CorrectionKernel(oversample) : undefined;
+    this.corrected = new Float64Array(chunk + 1);
     this.taps = probes.map((probe) => {
       const output = this.machine.output(probe);
       if (output === undefined) throw unknownProbe(probe, this.machine.outputNames());
-      return { output, decimator: new Decimator(this.stride, this.rate) };
+      return {
+        output,
+        corrector: kernel && new EdgeCorrector(kernel, chunk),
+        decimator: new Decimator(this.stride, this.rate),
+      };
     });
     this.units = this.taps.map(({ output }) => output.unit);
-    this.latency = this.taps[0]?.decimator.latency ?? 0;
+    this.latency = (kernel?.reach ?? 0) + (this.taps[0]?.decimator.latency ?? 0);
   }
 
   /** Internal samples that make `count` trace samples. */
@@ -58,8 +69,14 @@ export class Run {
     if (this.started) this.machine.advance(computed);
     else this.machine.start();
     let appended = 0;
-    this.taps.forEach(({ output, decimator }, i) => {
-      appended = decimator.push(output.values, from, from + computed, into[i]!, at);
+    const { corrected } = this;
+    this.taps.forEach(({ output, corrector, decimator }, i) => {
+      const last = from + computed;
+      if (corrector === undefined) appended = decimator.push(output.values, from, last, into[i]!, at);
+      else {
+        const ready = corrector.push(output.values, output.edges, from, last, corrected);
+        appended = decimator.push(corrected, 0, ready, into[i]!, at);
+      }
     });
     if (this.started) this.machine.rotate(computed);
     this.started = true;

@@ -1,4 +1,5 @@
 import { dimensions, overDimension } from '../quantity/dimension.ts';
+import { findCorners } from './corners.ts';
 import { couplingGroups, dependsOn } from './coupling.ts';
 import type { Equations, StateDeclaration } from './declare.ts';
 import { tangent } from './differentiate.ts';
@@ -16,6 +17,8 @@ export interface LoweringRequest {
   readonly time: Expression;
   /** Outputs whose slope is needed downstream. */
   readonly slopesOf: ReadonlySet<string>;
+  /** Whether edges are carried, and may come in: then inputs that meet are taken between samples. */
+  readonly carry?: { readonly incoming: boolean };
 }
 
 /** Makes equations ready for a back-end: grouping of states, derivatives, hoisting. */
@@ -56,7 +59,11 @@ class Lowering {
     const lowered = {
       groups,
       stateSlopes: needsStateSlopes ? states.map(({ slope }) => this.slots.hoist(slope)) : [],
-      crossings: crossings.map((crossing) => this.crossing(crossing)),
+      crossings: [
+        ...crossings.map((crossing) => this.crossing(crossing)),
+        ...(this.request.carry === undefined ? [] : this.corners()),
+      ],
+      jetSlopes: states.map(({ slope }) => this.slots.hoist(slope)),
       outputs: Object.entries(outputs).map(([name, value]) => this.output(name, value)),
     };
     return {
@@ -112,6 +119,7 @@ class Lowering {
   private crossing({ expression, changes }: Equations['crossings'][number]): Crossing {
     const { states, helds } = this.equations;
     return {
+      corner: false,
       expression: this.slots.hoist(expression),
       slope: this.slots.hoist(this.slopeInTime(expression)),
       changes: changes.map(({ target, value }) => {
@@ -121,6 +129,19 @@ class Lowering {
         return { kind, memory, value: this.slots.hoist(value) };
       }),
     };
+  }
+
+  /** Where the outputs or the slopes of the states choose between branches by something that moves. */
+  private corners(): Crossing[] {
+    const { states, outputs } = this.equations;
+    return findCorners([...Object.values(outputs), ...states.map(({ slope }) => slope)]).map(
+      (expression) => ({
+        corner: true,
+        expression: this.slots.hoist(expression),
+        slope: this.slots.hoist(this.slopeInTime(expression)),
+        changes: [],
+      }),
+    );
   }
 
   private output(name: string, value: Expression): Output {
@@ -140,8 +161,13 @@ class Lowering {
     crossings,
     outputs,
   }: Pick<Program, 'groups' | 'crossings' | 'outputs'>): boolean[] {
-    const split = crossings.length > 0 || groups.some((group) => group.kind === 'implicit');
+    const { carry, inputs } = this.request;
+    const split =
+      carry?.incoming || crossings.length > 0 || groups.some((group) => group.kind === 'implicit');
+    const meeting = carry !== undefined && ((carry.incoming && inputs.length > 1) || crossings.length > 0);
     const moving: Expression[] = [
+      ...(meeting ? outputs.map(({ value }) => value) : []),
+      ...crossings.flatMap(({ changes }) => changes.map(({ value }) => value)),
       ...groups.flatMap((group) => (group.kind === 'linear' ? [group.drive] : group.field)),
       ...crossings.map(({ expression }) => expression),
     ];
@@ -149,7 +175,7 @@ class Lowering {
       ...groups.flatMap((group) => (group.kind === 'linear' ? [group.driveSlope] : [])),
       ...outputs.flatMap(({ slope }) => (slope === undefined ? [] : [slope])),
     ];
-    return this.request.inputs.map(
+    return inputs.map(
       (input, index) =>
         slopes.some((slope) => dependsOn(slope, this.inputSlopes[index]!)) ||
         (split && moving.some((expression) => dependsOn(expression, input))),

@@ -33,8 +33,12 @@ export interface ImplicitGroup {
 /** One step of the integration order. */
 export type Group = LinearGroup | ImplicitGroup;
 
-/** An event with all that locating and carrying it out takes. */
+/**
+ * An event with all that locating and carrying it out takes; or a corner, where a choice between
+ * smooth branches is decided anew. A corner changes nothing, but it is passed in both directions.
+ */
 export interface Crossing {
+  readonly corner: boolean;
   readonly expression: Expression;
   readonly slope: Expression;
   /** `memory` indexes the states, or the held numbers. */
@@ -72,6 +76,9 @@ export interface Program {
   readonly groups: readonly Group[];
   /** Slopes of all states, where an implicit group needs those of an earlier group; else empty. */
   readonly stateSlopes: readonly Expression[];
+  /** Events, then corners. */
   readonly crossings: readonly Crossing[];
+  /** Slopes of all states, for their jets. */
+  readonly jetSlopes: readonly Expression[];
   readonly outputs: readonly Output[];
 }

@@ -1,4 +1,7 @@
 import { TailpairError } from '../../quantity/error.ts';
+import { CellInputs } from './cell-inputs.ts';
+import { sameInstant } from './edge-list.ts';
+import { JetEmitter } from './jet-emitter.ts';
 import type { Formulas, KernelContext } from './kernel.ts';
 import { linearWeights, weightsAt } from './linear-weights.ts';
 import { locate } from './locate.ts';
@@ -22,73 +25,115 @@ const mostInCell = 10_000;
 export class CellStepper {
   private readonly context: KernelContext;
   private readonly formulas: Formulas;
+  private readonly inputs: CellInputs;
   private readonly piece: PieceStepper;
+  private readonly jets: JetEmitter;
   /** Expressions of all crossings at the point last measured. */
   private readonly rises: Float64Array;
   private readonly slopes: Float64Array;
 
   constructor(context: KernelContext, formulas: Formulas) {
-    const crossings = context.program.crossings.length;
+    const { ports, program } = context;
+    const crossings = program.crossings.length;
     this.context = context;
     this.formulas = formulas;
-    this.piece = new PieceStepper(context, formulas);
+    this.inputs = new CellInputs(
+      { values: ports.inputs, slopes: ports.inputSlopes, edges: ports.inputEdges },
+      context.clock,
+    );
+    this.piece = new PieceStepper(context, formulas, this.inputs);
+    this.jets = new JetEmitter(context, this.inputs);
     this.rises = new Float64Array(crossings);
     this.slopes = new Float64Array(crossings);
   }
 
   /** Puts the memory at sample `n`: cached values, drives, and the events that are due at once. */
   settleAt(n: number): void {
-    readSample(this.context, n, this.piece.start);
+    this.sample(n);
     this.context.memory.past.fill(0);
     this.refresh();
     this.settle(-1);
     this.piece.drive();
   }
 
-  /** Steps the memory over the cell that ends at sample `n`. */
+  /** A new chunk begins, with new edges at the inputs. */
+  rewind(): void {
+    this.inputs.rewind();
+  }
+
+  /** Steps the memory over the cell that ends at sample `n`, and writes the edges it makes. */
   step(n: number): void {
-    const { piece } = this;
-    readSample(this.context, n - 1, piece.start);
+    const { piece, inputs } = this;
+    this.sample(n - 1);
+    inputs.enter(n);
     let events = 0;
+    let nextBreak = 0;
     for (let from = 0; from < 1; ) {
-      const to = piece.integrate(n, from);
-      const event = this.firstEvent(n, from, to);
+      const limit = inputs.breaks[nextBreak] ?? 1;
+      let to = piece.integrate(from, limit);
+      const event = this.firstEvent(from, to);
+      if (event !== undefined) to = event.at;
       piece.commit();
-      if (event === undefined) from = to;
-      else {
-        from = event.at;
+      const broken = nextBreak < inputs.breaks.length && to >= limit - sameInstant;
+      if (broken) nextBreak += 1;
+      if (event !== undefined || broken) {
         events += 1;
         if (events > mostInCell)
-          this.refuseStorm(event.crossing, `${mostInCell} events fell between two samples`);
-        this.settle(event.crossing);
-        piece.drive();
+          this.refuseStorm(event?.crossing ?? 0, `${mostInCell} events fell between two samples`);
+        this.split(n, broken ? limit : to, event?.crossing ?? -1);
+        if (broken) to = limit;
       }
+      from = to;
     }
   }
 
+  /** Crosses an instant at which something jumps: the memory stands just before it, and is put just after. */
+  private split(n: number, at: number, crossing: number): void {
+    const { piece, jets, inputs } = this;
+    const { carry } = this.context;
+    if (carry) {
+      jets.noteBefore(at, piece.start.t);
+      inputs.read(at, 1, piece.start);
+    }
+    this.settle(crossing);
+    piece.drive();
+    if (carry) jets.emit(n, at, piece.start.t);
+  }
+
+  private sample(n: number): void {
+    readSample(this.context, n, this.piece.start);
+  }
+
   /** The first event between `from` and `to`; the piece is stepped anew to its instant. */
-  private firstEvent(n: number, from: number, to: number): { crossing: number; at: number } | undefined {
+  private firstEvent(from: number, to: number): { crossing: number; at: number } | undefined {
     const { past } = this.context.memory;
     const { rises, piece } = this;
     if (rises.length === 0) return undefined;
     let event: { crossing: number; at: number } | undefined;
     this.measure(piece.next, piece.end);
     for (let k = 0; k < rises.length; k++) {
-      if (past[k] !== 0 || !this.isPast(k, piece.next, piece.end)) continue;
-      const high = rises[k]!;
+      const isPast = this.isPast(k, piece.next, piece.end);
+      if (!this.isCorner(k) ? past[k] !== 0 || !isPast : isPast === (past[k] !== 0)) continue;
+      // A corner that is passed downward is a rise of its negative.
+      const sign = isPast ? 1 : -1;
+      const high = sign * rises[k]!;
       this.measure(this.context.memory.states, piece.start);
-      const low = rises[k]!;
-      const at = locate(from, low, event?.at ?? to, high, (share) => this.riseAt(k, n, from, share));
-      this.riseAt(k, n, from, at);
+      const low = sign * rises[k]!;
+      const at = locate(from, low, event?.at ?? to, high, (share) => sign * this.riseAt(k, from, share));
+      this.riseAt(k, from, at);
       event = { crossing: k, at };
     }
     if (event === undefined) this.rearm();
     return event;
   }
 
-  private riseAt(crossing: number, n: number, from: number, to: number): number {
+  private isCorner(crossing: number): boolean {
+    return this.context.program.crossings[crossing]!.corner;
+  }
+
+  private riseAt(crossing: number, from: number, to: number): number {
     const { piece } = this;
-    piece.step(n, from, to);
+    piece.step(from, to);
     this.measure(piece.next, piece.end);
     return this.rises[crossing]!;
   }
@@ -101,10 +146,12 @@ export class CellStepper {
     const { memory } = this.context;
     const { rises } = this;
     const { start } = this.piece;
+    if (located >= 0 && this.isCorner(located)) memory.past[located] = 1 - memory.past[located]!;
     let count = 0;
     for (let again = rises.length > 0; again; ) {
       again = false;
       for (let k = 0; k < rises.length; k++) {
+        if (this.isCorner(k)) continue;
         this.measure(memory.states, start);
         const due = (k === located && count === 0) || this.isPast(k, memory.states, start);
         if (due && memory.past[k] === 0) {
@@ -121,6 +168,17 @@ export class CellStepper {
     }
     this.measure(memory.states, start);
     this.rearm();
+    this.turnCorners(located);
+  }
+
+  /** Notes on which side of each corner the start point lies; one located here has just been passed. */
+  private turnCorners(located: number): void {
+    const { memory } = this.context;
+    this.measure(memory.states, this.piece.start);
+    for (let k = 0; k < this.rises.length; k++) {
+      if (!this.isCorner(k) || k === located) continue;
+      memory.past[k] = this.isPast(k, memory.states, this.piece.start) ? 1 : 0;
+    }
   }
 
   private refuseStorm(crossing: number, much: string): never {
@@ -146,7 +204,7 @@ export class CellStepper {
   /** Lets crossings whose expression has just been measured below zero rise again. */
   private rearm(): void {
     const { past } = this.context.memory;
-    for (let k = 0; k < past.length; k++) if (this.rises[k]! < 0) past[k] = 0;
+    for (let k = 0; k < past.length; k++) if (this.rises[k]! < 0 && !this.isCorner(k)) past[k] = 0;
   }
 
   /** Recomputes what depends on held memory, and the whole-cell weights of the linear groups. */

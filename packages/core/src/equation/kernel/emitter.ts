@@ -68,6 +68,12 @@ export class Emitter {
     this.counter = inside?.outer.counter ?? { next: 0 };
   }
 
+  /** The same emitter, its lines so far taken away: what follows may use their names. */
+  continued(): Emitter {
+    this.lines.length = 0;
+    return this;
+  }
+
   /** The text of a vertex; what it needs is appended to `lines` first. */
   text(node: EquationNode): string {
     if (node.op === 'constant') return number(node.value);

@@ -12,9 +12,3 @@ export function hermiteValue(a: number, b: number, da: number, db: number, at: n
   const rest = 1 - at;
   return rest * rest * ((1 + 2 * at) * a + at * da) + at * at * ((1 + 2 * rest) * b - rest * db);
 }
-
-/** Slope of the same cubic, times the length of the interval. */
-export function hermiteSlope(a: number, b: number, da: number, db: number, at: number): number {
-  const rest = 1 - at;
-  return 6 * at * rest * (b - a) + rest * (1 - 3 * at) * da + at * (1 - 3 * rest) * db;
-}

@@ -1,4 +1,5 @@
 import type { Program } from '../program.ts';
+import type { EdgeList } from './edge-list.ts';
 import type { KernelMemory } from './memory.ts';
 
 /** The clock of a run, shared by all its kernels: time is index × period, never accumulated. */
@@ -19,6 +20,9 @@ export interface KernelPorts {
   readonly inputSlopes: readonly Float64Array[];
   readonly outputs: readonly Float64Array[];
   readonly outputSlopes: readonly Float64Array[];
+  /** Edges of each input and output in the chunk at hand. */
+  readonly inputEdges: readonly EdgeList[];
+  readonly outputEdges: readonly EdgeList[];
 }
 
 /** What a block's formulas are computed on. */
@@ -27,6 +31,8 @@ export interface KernelContext {
   readonly memory: KernelMemory;
   readonly ports: KernelPorts;
   readonly clock: Clock;
+  /** Whether edges are carried. */
+  readonly carry: boolean;
 }
 
 /**

@@ -1,3 +1,4 @@
+import type { Expression } from '../expression.ts';
 import type { EquationNode } from '../node.ts';
 import type { LinearGroup, Program } from '../program.ts';
 import { variabilityOf } from '../variability.ts';
@@ -60,6 +61,7 @@ class LoopText {
     const step: string[] = [];
     const endLeaves = new Map(program.states.map(({ symbol }, i) => [symbol as EquationNode, next[i]!]));
     const roots = [
+      ...(program.states.length === 0 ? outputRoots(program) : []),
       ...groups.flatMap(({ drive, driveSlope }) => [drive, driveSlope]),
       ...program.crossings.map(({ expression }) => expression),
     ];
@@ -91,7 +93,12 @@ class LoopText {
     ];
     if (watched.length === 0) step.push(...commit);
     else {
-      const hit = watched.map(({ i }) => `(r${i} >= 0 && past[${i}] === 0)`).join(' || ');
+      const corner = (i: number): boolean => program.crossings[i]!.corner;
+      const hit = watched
+        .map(({ i }) =>
+          corner(i) ? `(r${i} >= 0 ? 1 : 0) !== past[${i}]` : `(r${i} >= 0 && past[${i}] === 0)`,
+        )
+        .join(' || ');
       step.push(
         `if (${hit}) {`,
         ...memory.map(([name, cell]) => `  ${cell} = ${name};`),
@@ -99,19 +106,23 @@ class LoopText {
         ...memory.map(([name, cell]) => `  ${name} = ${cell};`),
         '  /*reload*/',
         '} else {',
-        ...watched.map(({ i }) => `  if (r${i} < 0) past[${i}] = 0;`),
+        ...watched.filter(({ i }) => !corner(i)).map(({ i }) => `  if (r${i} < 0) past[${i}] = 0;`),
         ...commit.map((line) => `  ${line}`),
         '}',
       );
     }
-    program.states.forEach(({ symbol }, i) => this.texts.set(symbol, states[i]!));
-    return this.assemble(step, this.outputs(), memory);
+    program.states.forEach(({ symbol }, i) => {
+      this.texts.set(symbol, states[i]!);
+    });
+    // Without memory an event changes no value, so the outputs may use what has been computed.
+    const forgetful = program.states.length === 0 && program.helds.length === 0;
+    return this.assemble(step, this.outputs(forgetful ? emitter : undefined), memory);
   }
 
-  private outputs(): string[] {
+  private outputs(computed?: Emitter): string[] {
     const { outputs } = this.program;
-    const slopes = outputs.flatMap(({ slope }) => (slope === undefined ? [] : [slope]));
-    const emitter = new Emitter([...outputs.map(({ value }) => value), ...slopes], (leaf) => this.leaf(leaf));
+    const emitter =
+      computed?.continued() ?? new Emitter(outputRoots(this.program), (leaf) => this.leaf(leaf));
     const writes = outputs.flatMap(({ value, slope }, i) => [
       `${this.constant(`O${i}`, `outputs[${i}]`)}[n] = ${emitter.text(value)};`,
       ...(slope === undefined
@@ -182,4 +193,8 @@ class LoopText {
     this.reads.set(name, from);
     return name;
   }
+}
+
+function outputRoots({ outputs }: Program): Expression[] {
+  return outputs.flatMap(({ value, slope }) => (slope === undefined ? [value] : [value, slope]));
 }

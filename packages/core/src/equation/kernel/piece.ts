@@ -1,11 +1,12 @@
 import { TailpairError } from '../../quantity/error.ts';
+import type { CellInputs } from './cell-inputs.ts';
 import { hermiteValue } from './hermite.ts';
 import { ImplicitRun } from './implicit-run.ts';
 import type { GroupField } from './implicit-step.ts';
 import type { Formulas, KernelContext } from './kernel.ts';
 import { linearStep, linearWeights, steadyStep } from './linear-weights.ts';
 import { weightsPerGroup } from './memory.ts';
-import { Point, readInside } from './point.ts';
+import { Point } from './point.ts';
 
 /** Above this stiffness (length × norm of the jacobian) a piece is divided. */
 const stiffLimit = 1;
@@ -30,6 +31,7 @@ export class PieceStepper {
   readonly next: Float64Array;
   private readonly context: KernelContext;
   private readonly formulas: Formulas;
+  private readonly inputs: CellInputs;
   private readonly middle: Point;
   private readonly between: Float64Array;
   private readonly nextDrives: Float64Array;
@@ -40,11 +42,12 @@ export class PieceStepper {
   /** Whether the piece at hand is stepped by the damped rule. */
   private damped = false;
 
-  constructor(context: KernelContext, formulas: Formulas) {
+  constructor(context: KernelContext, formulas: Formulas, cellInputs: CellInputs) {
     const { inputs, states, groups } = context.program;
     const vector = (): Float64Array => new Float64Array(states.length);
     this.context = context;
     this.formulas = formulas;
+    this.inputs = cellInputs;
     this.start = new Point(inputs.length);
     this.middle = new Point(inputs.length);
     this.end = new Point(inputs.length);
@@ -59,24 +62,24 @@ export class PieceStepper {
   }
 
   /**
-   * Integrates from `from` towards the end of the cell at sample `n`, as far as one piece may go.
+   * Integrates from `from` towards `limit`, shares of the present cell, as far as one piece may go.
    *
    * @returns where the piece ends, as a share of the cell
    */
-  integrate(n: number, from: number): number {
+  integrate(from: number, limit: number): number {
     this.damped = false;
-    for (let to = 1; ; ) {
-      const stiffness = this.step(n, from, to);
+    for (let to = limit; ; ) {
+      const stiffness = this.step(from, to);
       if (stiffness <= stiffLimit) return to;
-      if (stiffness > dampedLimit * (to - from)) return this.integrateDamped(n, from);
+      if (stiffness > dampedLimit * (to - from)) return this.integrateDamped(from, limit);
       to = this.shorter(from, to, Math.ceil(stiffness / stiffAim));
     }
   }
 
-  private integrateDamped(n: number, from: number): number {
+  private integrateDamped(from: number, limit: number): number {
     this.damped = true;
-    let to = Math.min(1, from + 1 / dampedPieces);
-    while (this.step(n, from, to) > stiffLimit) to = this.shorter(from, to, 2);
+    let to = Math.min(limit, from + 1 / dampedPieces);
+    while (this.step(from, to) > stiffLimit) to = this.shorter(from, to, 2);
     return to;
   }
 
@@ -94,11 +97,11 @@ export class PieceStepper {
    *
    * @returns the largest stiffness met; infinite where a step did not settle
    */
-  step(n: number, from: number, to: number): number {
+  step(from: number, to: number): number {
     const { memory, program, clock } = this.context;
     const { next, end, weights, nextDrives } = this;
     const length = (to - from) * clock.period;
-    readInside(this.context, n, to, end);
+    this.inputs.read(to, -1, end);
     let stiffness = 0;
     for (let index = 0; index < program.groups.length; index++) {
       const group = program.groups[index]!;
@@ -111,7 +114,7 @@ export class PieceStepper {
           ? steadyStep(weights, 0, x, nextDrives[2 * index]!)
           : linearStep(weights, 0, x, memory.drives, nextDrives, 2 * index);
       } else {
-        readInside(this.context, n, (from + to) / 2, this.middle);
+        this.inputs.read((from + to) / 2, -1, this.middle);
         stiffness = Math.max(stiffness, this.implicitStep(index, length));
       }
     }
