@@ -10,6 +10,9 @@ import {
   volts,
 } from '@tailpair/core/block';
 
+/** Edges come this much early, so that the rounding of sums cannot push one past the sample it is set for. */
+const early = '1 ps';
+
 /** Gate pulses at set times. */
 export const gate = defineBlock({
   kind: 'gate',
@@ -31,8 +34,8 @@ export const gate = defineBlock({
     const pulse = held(0);
     const opens = delay.add(pulse.mul(period));
     const more = most.eq(0).or(pulse.lt(most));
-    onCrossing(select(more, time.sub(opens), '-1 s'), () => [set(open, 1)]);
-    onCrossing(time.sub(opens.add(length)), () => [set(open, 0), set(pulse, pulse.add(1))]);
+    onCrossing(select(more, time.add(early).sub(opens), '-1 s'), () => [set(open, 1)]);
+    onCrossing(time.add(early).sub(opens.add(length)), () => [set(open, 0), set(pulse, pulse.add(1))]);
     return { out: high.mul(open) };
   },
 });

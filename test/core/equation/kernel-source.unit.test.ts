@@ -30,7 +30,7 @@ function source(kind: BlockKind, given: Record<string, unknown> = {}, name = 'x'
 const allowed = new RegExp(
   `^(${[
     'use|strict|const|let|return|function|for|if|else|break|NaN|Infinity|this',
-    'fixed|cached|states|held|past|rates|weights|drives|memory|inputs|inputSlopes|outputs|outputSlopes|ports|clock|base|period|lib',
+    'fixed|cached|states|held|past|rates|weights|drives|memory|inputs|inputSlopes|outputs|outputSlopes|ports|clock|base|rate|lib',
     'refresh|drive|field|stateSlopes|crossings|crossingSlopes|change|emit|loop|cell|run|group|crossing|jacobian|out|from|to|start',
     'Math|abs|min|max|floor|sqrt|exp|exp2|log|sin|cos|tanh',
     '[a-zA-Z]|[a-zA-Z]\\d+(_\\d+)?|e\\d*',

@@ -6,8 +6,8 @@ import type { OutputBuffers } from './output-buffers.ts';
 
 /** How a machine is built. */
 export interface MachineOptions extends AssemblyOptions {
-  /** Seconds between internal samples. */
-  readonly period: number;
+  /** Internal samples per second. */
+  readonly rate: number;
 }
 
 /**
@@ -19,7 +19,7 @@ export class Machine {
   private readonly assembly: Assembly;
 
   constructor(patch: Patch, options: MachineOptions) {
-    this.clock = { period: options.period, base: 0 };
+    this.clock = { rate: options.rate, period: 1 / options.rate, base: 0 };
     this.assembly = assemble(patch, this.clock, options);
   }
 
@@ -62,7 +62,7 @@ export class Machine {
     let first = from;
     while (first < to && Number.isFinite(values[first]!)) first += 1;
     if (first === to) return;
-    const time = (this.clock.base + first) * this.clock.period;
+    const time = (this.clock.base + first) / this.clock.rate;
     throw new TailpairError(
       'not-finite',
       `became ${values[first]} ${unit} at ${time} s; its equation has no finite value there, so look at the block's inputs and part values`,

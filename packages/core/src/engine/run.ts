@@ -36,7 +36,7 @@ export class Run {
     this.chunk = chunk;
     this.stride = decimate ? oversample : 1;
     this.rate = decimate ? rate : internal;
-    this.machine = new Machine(patch, { period: 1 / internal, chunk, backEnd, carry });
+    this.machine = new Machine(patch, { rate: internal, chunk, backEnd, carry });
     const kernel = carry ? new CorrectionKernel(oversample) : undefined;
     this.corrected = new Float64Array(chunk + 1);
     this.taps = probes.map((probe) => {

@@ -3,6 +3,7 @@ import { Run, requireGoing } from '../engine/run.ts';
 import { type RunOptions, readLength, readOptions } from '../engine/run-options.ts';
 import type { Patch } from '../patch/patch.ts';
 import type { Warning } from '../patch/placed.ts';
+import { TailpairError } from '../quantity/error.ts';
 import { type ProbeTraces, probeTraces } from './probe-traces.ts';
 
 /** What a simulation is told. */
@@ -30,6 +31,18 @@ export interface Simulation<Probe extends string> {
   readonly diagnostics: Diagnostics;
 }
 
+/** Samples that one simulation may hold: two gigabytes of them. */
+const mostSamples = 2 ** 28;
+
+function requireRoom(samples: number): void {
+  if (samples <= mostSamples) return;
+  throw new TailpairError(
+    'value-range',
+    `the traces would hold ${samples} samples, ${mostSamples} are allowed; shorten the run, or take it piece by piece with stream`,
+    { where: 'length' },
+  );
+}
+
 /** Chunks between two looks at the clock. */
 const chunksPerLook = 16;
 
@@ -49,6 +62,7 @@ export async function simulate<const Output extends string, const Probe extends 
   const read = readOptions(options);
   const run = new Run(patch, options.probes, read);
   const count = readLength(options.length, run.rate);
+  requireRoom(count * options.probes.length);
   const samples = options.probes.map(() => new Float64Array(count));
   const total = run.samplesFor(count);
   const breathe = breather();

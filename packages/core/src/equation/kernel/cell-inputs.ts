@@ -87,7 +87,7 @@ export class CellInputs {
         point.s[i] = cubic[1]! / clock.period;
       }
     }
-    point.t = (clock.base + this.cell - 1 + at) * clock.period;
+    point.t = (clock.base + this.cell - 1 + at) / clock.rate;
   }
 
   /** Writes the jet of input `i` just before or after a share of the cell. */

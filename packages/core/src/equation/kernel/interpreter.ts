@@ -97,7 +97,7 @@ class InterpretedFormulas implements Formulas {
     const { program, memory, ports, clock } = this.context;
     const u = ports.inputs.map((buffer) => buffer[n]!);
     const s = ports.inputSlopes.map((buffer) => buffer[n] ?? 0);
-    const bindings = this.moving(memory.states, u, s, (clock.base + n) * clock.period);
+    const bindings = this.moving(memory.states, u, s, (clock.base + n) / clock.rate);
     program.outputs.forEach(({ value, slope }, i) => {
       ports.outputs[i]![n] = evaluate(value, bindings);
       if (slope !== undefined) ports.outputSlopes[i]![n] = evaluate(slope, bindings);

@@ -166,7 +166,7 @@ function emit(program: Program, leaves: Leaves): string[] {
   program.states.forEach(({ symbol }, i) => own.set(symbol, `X[${i}]`));
   program.inputs.forEach((input, i) => own.set(input, `inputs[${i}][n]`));
   program.inputSlopes.forEach((slope, i) => own.set(slope, `inputSlopes[${i}][n]`));
-  own.set(program.time, '((clock.base + n) * clock.period)');
+  own.set(program.time, '((clock.base + n) / clock.rate)');
   const slopes = program.outputs.flatMap(({ slope }) => (slope === undefined ? [] : [slope]));
   const emitter = writer([...program.outputs.map(({ value }) => value), ...slopes], own);
   const writes = program.outputs.flatMap(({ value, slope }, i) => [

@@ -2,8 +2,13 @@ import type { Program } from '../program.ts';
 import type { EdgeList } from './edge-list.ts';
 import type { KernelMemory } from './memory.ts';
 
-/** The clock of a run, shared by all its kernels: time is index × period, never accumulated. */
+/**
+ * The clock of a run, shared by all its kernels. Time is index / rate, never accumulated: the
+ * quotient is the nearest number to the true time, so that an event set for a sample falls on it.
+ */
 export interface Clock {
+  /** Internal samples per second. */
+  readonly rate: number;
   /** Seconds between internal samples. */
   readonly period: number;
   /** Sample index that slot 0 of every buffer holds at the moment. */

@@ -165,7 +165,7 @@ class LoopText {
     const { program } = this;
     const at = (slots: readonly { readonly symbol: EquationNode }[]): number =>
       slots.findIndex(({ symbol }) => symbol === leaf);
-    if (leaf === program.time) return this.read('t', '(clock.base + n) * clock.period');
+    if (leaf === program.time) return this.read('t', '(clock.base + n) / clock.rate');
     const input = program.inputs.indexOf(leaf as never);
     if (input >= 0) return this.read(`u${input}`, `${this.constant(`U${input}`, `inputs[${input}]`)}[n]`);
     const slope = program.inputSlopes.indexOf(leaf as never);

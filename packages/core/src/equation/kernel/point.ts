@@ -26,5 +26,5 @@ export function readSample({ ports, clock }: KernelContext, n: number, point: Po
     point.u[i] = ports.inputs[i]![n]!;
     point.s[i] = ports.inputSlopes[i]![n] ?? 0;
   }
-  point.t = (clock.base + n) * clock.period;
+  point.t = (clock.base + n) / clock.rate;
 }
