@@ -122,7 +122,7 @@ describe('the compiled back-end agrees with the interpreter', () => {
             });
           },
         ),
-        { seed: 20261201, numRuns: 12, endOnFailure: true },
+        { seed: 20261201, numRuns: 30, endOnFailure: true },
       );
     });
   }
