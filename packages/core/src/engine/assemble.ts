@@ -1,5 +1,6 @@
 import { type SetUpBlock, setUpBlock } from '../block/set-up.ts';
 import { findCorners } from '../equation/corners.ts';
+import type { Expression } from '../equation/expression.ts';
 import { EdgeList } from '../equation/kernel/edge-list.ts';
 import type { BackEnd, Clock, Kernel } from '../equation/kernel/kernel.ts';
 import { lower } from '../equation/lower.ts';
@@ -26,12 +27,21 @@ export interface Stage {
 export interface Assembly {
   readonly stages: readonly Stage[];
   readonly outputs: ReadonlyMap<string, OutputBuffers>;
+  /** Compiled blocks by name. */
+  readonly compiled: ReadonlyMap<string, CompiledBlock>;
   /** Every buffer there is. */
   readonly buffers: readonly Float64Array[];
 }
 
 interface Lowered extends SetUpBlock {
   readonly program: Program;
+}
+
+/** A block's program with its values, and what comes into each of its inputs. */
+export interface CompiledBlock {
+  readonly program: Program;
+  readonly bindings: ReadonlyMap<Expression, number>;
+  readonly sources: readonly (readonly Source[])[];
 }
 
 const nothing = new Float64Array(0);
@@ -104,7 +114,13 @@ export function assemble(patch: Patch, clock: Clock, { chunk, backEnd, carry }: 
     for (const output of own) outputs.set(output.name, output);
     return { name: block.name, gathers, kernel, outputs: own };
   });
-  return { stages, outputs, buffers };
+  const compiled = new Map(
+    [...lowered].map(([block, { program, bindings, bound }]) => {
+      const sources = bound.inputs.map(({ port, part }) => sourcesOf(patch, block, port, part));
+      return [block.name, { program, bindings, sources }];
+    }),
+  );
+  return { stages, outputs, compiled, buffers };
 }
 
 type InputBuffers = Pick<OutputBuffers, 'values' | 'slopes' | 'edges'>;
@@ -169,7 +185,8 @@ function setUp(block: PlacedBlock, patch: Patch): SetUpBlock {
   });
 }
 
-interface Source {
+/** One thing that comes into an input. */
+export interface Source {
   /** Output it comes from, `block.port`. */
   readonly name: string;
   /** 1, or the conductance of the wire's resistor. */

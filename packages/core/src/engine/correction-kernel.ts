@@ -6,6 +6,8 @@ import { solveDense } from '../numeric/solve-dense.ts';
 const rows = 32;
 /** Coefficients of the cubic in each row. */
 const cubic = 4;
+/** Terms in the table: the impulse, and its integrals less those of the ideal one. */
+const tableTerms = jetLength + 1;
 /** Points and weights of the Gauss–Legendre rule of order 12 on [−1, 1] (any table). */
 const gauss: readonly (readonly [number, number])[] = [
   [0.2386191860831969, 0.467913934572691],
@@ -33,6 +35,8 @@ const designs: readonly (readonly [least: number, Design])[] = [
   [1, { length: 64, beta: 16, cutoff: 0.5 }],
 ];
 
+const kernels = new Map<number, CorrectionKernel>();
+
 /**
  * What must be added to point samples of a waveform so that its jumps read as if it had been
  * band-limited: for a jump of the j-th derivative, the (j+1)-fold integral of a band-limiting
@@ -46,11 +50,18 @@ const designs: readonly (readonly [least: number, Design])[] = [
 export class CorrectionKernel {
   /** Samples before and after an edge that it touches. */
   readonly reach: number;
-  /** Row by row; in a row tap by tap, in a tap term by term, in a term the cubic's coefficients. */
+  /** Row by row; in a row tap by tap, in a tap term by term (0: the impulse itself), in a term the cubic. */
   private readonly table: Float64Array;
   private readonly span: number;
 
-  constructor(oversample: number) {
+  /** The kernel for an oversampling; tabulated once. */
+  static for(oversample: number): CorrectionKernel {
+    const kernel = kernels.get(oversample) ?? new CorrectionKernel(oversample);
+    kernels.set(oversample, kernel);
+    return kernel;
+  }
+
+  private constructor(oversample: number) {
     const design = designs.find(([least]) => oversample >= least)![1];
     this.span = design.length;
     this.reach = design.length / 2;
@@ -61,11 +72,13 @@ export class CorrectionKernel {
    * Adds the correction of one edge.
    *
    * @param line accumulator; the sample that ends the edge's cell is at `end`
+   * @param slopes the same for the slope of the signal, per sample, or empty
    * @param at the edge's fraction of its cell, 0 < at ≤ 1
    * @param before jets at `index` of `before` and `after`
    */
   add(
     line: Float64Array,
+    slopes: Float64Array,
     end: number,
     at: number,
     before: Float64Array,
@@ -82,20 +95,24 @@ export class CorrectionKernel {
       jumps[j] = factorial * (after[index + j]! - before[index + j]!);
     }
     const terms = usefulTerms();
-    const start = row * span * jetLength * cubic;
+    const start = row * span * tableTerms * cubic;
     for (let tap = 0; tap < span; tap++) {
-      let entry = start + tap * jetLength * cubic;
-      let sum = 0;
-      for (let j = 0; j < terms; j++) {
-        sum +=
-          jumps[j]! *
-          (table[entry]! + u * (table[entry + 1]! + u * (table[entry + 2]! + u * table[entry + 3]!)));
-        entry += cubic;
-      }
       const n = end - reach + tap;
-      if (n >= 0) line[n]! += sum;
+      if (n < 0) continue;
+      const entry = start + tap * tableTerms * cubic;
+      let sum = 0;
+      for (let j = 0; j < terms; j++) sum += jumps[j]! * cubicAt(table, entry + (j + 1) * cubic, u);
+      line[n]! += sum;
+      if (slopes.length === 0) continue;
+      sum = 0;
+      for (let j = 0; j < terms; j++) sum += jumps[j]! * cubicAt(table, entry + j * cubic, u);
+      slopes[n]! += sum;
     }
   }
+}
+
+function cubicAt(table: Float64Array, entry: number, u: number): number {
+  return table[entry]! + u * (table[entry + 1]! + u * (table[entry + 2]! + u * table[entry + 3]!));
 }
 
 const jumps = new Float64Array(jetLength);
@@ -159,16 +176,22 @@ function tabulate(design: Design): Float64Array {
     if (k > 0 || (k === 0 && fromRight)) return right[k]![j]!;
     return (j % 2 === 0 ? 1 : -1) * right[-k]![j]!;
   };
-  const table = new Float64Array(rows * design.length * jetLength * cubic);
+  /** Slope of the impulse, by a difference good to nine digits. */
+  const steepness = (i: number): number => {
+    const t = i / rows - half;
+    const step = 1e-4;
+    return Math.abs(t) + step > half ? 0 : (impulse(t + step) - impulse(t - step)) / (2 * step);
+  };
+  const table = new Float64Array(rows * design.length * tableTerms * cubic);
   let entry = 0;
   for (let row = 0; row < rows; row++) {
     for (let tap = 0; tap < design.length; tap++) {
       const i = tap * rows + row;
-      for (let j = 1; j <= jetLength; j++) {
+      for (let j = 0; j <= jetLength; j++) {
         const a = value(i, j, true);
         const b = value(i + 1, j, false);
-        const da = value(i, j - 1, true) / rows;
-        const db = value(i + 1, j - 1, false) / rows;
+        const da = (j === 0 ? steepness(i) : value(i, j - 1, true)) / rows;
+        const db = (j === 0 ? steepness(i + 1) : value(i + 1, j - 1, false)) / rows;
         table.set([a, da, 3 * (b - a) - 2 * da - db, 2 * (a - b) + da + db], entry);
         entry += cubic;
       }

@@ -1,7 +1,7 @@
 import type { Clock } from '../equation/kernel/kernel.ts';
 import type { Patch } from '../patch/patch.ts';
 import { TailpairError } from '../quantity/error.ts';
-import { type Assembly, type AssemblyOptions, assemble, type Stage } from './assemble.ts';
+import { type Assembly, type AssemblyOptions, assemble, type CompiledBlock, type Stage } from './assemble.ts';
 import type { OutputBuffers } from './output-buffers.ts';
 
 /** How a machine is built. */
@@ -26,6 +26,11 @@ export class Machine {
   /** Buffers of an output, by its name `block.port`. */
   output(name: string): OutputBuffers | undefined {
     return this.assembly.outputs.get(name);
+  }
+
+  /** The compiled program of a block; undefined for plain kernels. */
+  compiled(block: string): CompiledBlock | undefined {
+    return this.assembly.compiled.get(block);
   }
 
   /** Names of all outputs. */

@@ -20,8 +20,8 @@ export interface RunOptions<Probe extends string> {
   /**
    * What becomes of steps and corners. `sampled` (default): signals are point samples, and what
    * their edges fold back is left. `carried`: edges travel with their exact time through every block
-   * and are corrected once, where a probe takes them; exact for paths whose poles stay below about
-   * 16 kHz at 4 × oversampling, no better than sampled behind faster ones.
+   * and are corrected once, where a probe takes them. A pole above about 16 kHz ahead of a bend wants
+   * more oversampling; see docs/edges.md.
    */
   readonly edges?: 'sampled' | 'carried';
   /** Stops the run when it becomes aborted; an `AbortSignal` will do. */

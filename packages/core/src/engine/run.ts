@@ -1,8 +1,9 @@
 import type { Patch } from '../patch/patch.ts';
 import { TailpairError } from '../quantity/error.ts';
+import { correctedSignal } from './corrected-path.ts';
+import type { CorrectedSignal } from './corrected-signal.ts';
 import { CorrectionKernel } from './correction-kernel.ts';
 import { Decimator } from './decimator.ts';
-import { EdgeCorrector } from './edge-corrector.ts';
 import { Machine } from './machine.ts';
 import type { OutputBuffers } from './output-buffers.ts';
 import { type ReadOptions, unknownProbe } from './run-options.ts';
@@ -11,7 +12,7 @@ import { type ReadOptions, unknownProbe } from './run-options.ts';
 interface ProbeTap {
   readonly output: OutputBuffers;
   /** Corrects the edges, where they are carried. */
-  readonly corrector: EdgeCorrector | undefined;
+  readonly corrected: CorrectedSignal | undefined;
   readonly decimator: Decimator;
 }
 
@@ -26,7 +27,6 @@ export class Run {
   readonly latency: number;
   private readonly machine: Machine;
   private readonly chunk: number;
-  private readonly corrected: Float64Array;
   private readonly taps: readonly ProbeTap[];
   private started = false;
 
@@ -37,14 +37,14 @@ export class Run {
     this.stride = decimate ? oversample : 1;
     this.rate = decimate ? rate : internal;
     this.machine = new Machine(patch, { rate: internal, chunk, backEnd, carry });
-    const kernel = carry ? new CorrectionKernel(oversample) : undefined;
-    this.corrected = new Float64Array(chunk + 1);
+    const kernel = carry ? CorrectionKernel.for(oversample) : undefined;
+    const path = kernel && { machine: this.machine, kernel, chunk, rate: internal, backEnd };
     this.taps = probes.map((probe) => {
       const output = this.machine.output(probe);
       if (output === undefined) throw unknownProbe(probe, this.machine.outputNames());
       return {
         output,
-        corrector: kernel && new EdgeCorrector(kernel, chunk),
+        corrected: path && correctedSignal(output.name, path, false),
         decimator: new Decimator(this.stride, this.rate),
       };
     });
@@ -69,13 +69,12 @@ export class Run {
     if (this.started) this.machine.advance(computed);
     else this.machine.start();
     let appended = 0;
-    const { corrected } = this;
-    this.taps.forEach(({ output, corrector, decimator }, i) => {
-      const last = from + computed;
-      if (corrector === undefined) appended = decimator.push(output.values, from, last, into[i]!, at);
+    const last = from + computed;
+    this.taps.forEach(({ output, corrected, decimator }, i) => {
+      if (corrected === undefined) appended = decimator.push(output.values, from, last, into[i]!, at);
       else {
-        const ready = corrector.push(output.values, output.edges, from, last, corrected);
-        appended = decimator.push(corrected, 0, ready, into[i]!, at);
+        const ready = corrected.advance(from, last);
+        appended = decimator.push(corrected.values, 1, ready + 1, into[i]!, at);
       }
     });
     if (this.started) this.machine.rotate(computed);
