@@ -11,12 +11,6 @@ export function resolutionOf(trace: Trace): number {
   return (2 / durationOf(trace)) * (1 - 1e-9);
 }
 
-/** Whether a record holds whole periods of a frequency (Hz), to 1e-10 of a period: then the two are orthogonal to rounding. */
-export function holdsWholePeriods(trace: Trace, frequency: number): boolean {
-  const periods = (trace.samples.length * frequency) / trace.rate;
-  return Math.abs(periods - Math.round(periods)) <= 1e-10;
-}
-
 /** Whether two frequencies (Hz) differ by rounding only: they were computed to be the same. */
 export function coincide(a: number, b: number): boolean {
   return Math.abs(a - b) <= 1e-9 * Math.max(Math.abs(a), Math.abs(b));
