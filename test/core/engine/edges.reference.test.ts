@@ -1,4 +1,4 @@
-import { coupling, currentSource, lfo, load, mixer, oscillator, ota } from '@tailpair/blocks';
+import { buffer, coupling, currentSource, lfo, load, mixer, oscillator, ota } from '@tailpair/blocks';
 import { type Patch, patch, simulate, wire } from '@tailpair/core';
 import { describe, expect, test } from 'vitest';
 import { realSpectrum } from '../../../packages/core/src/numeric/fft.ts';
@@ -73,6 +73,16 @@ describe.each(periods)('at %i periods in 32768 samples', (k) => {
       ({ master, it }) => [wire(master.out, it.sync)],
     );
     expect(worstInharmonic(await lines(built), k)).toBeLessThan(-160);
+  });
+
+  test('a sine and a triangle that clip at the rails of a buffer', async () => {
+    for (const shape of ['sine', 'triangle'] as const) {
+      const tone = oscillator({ shape, frequency: hertz(k), amplitude: '15 V' });
+      const built = patch({ blocks: { tone, it: buffer() } }, ({ tone: from, it }) => [
+        wire(from.out, it.in),
+      ]);
+      expect(worstInharmonic(await lines(built), k), shape).toBeLessThan(-150);
+    }
   });
 
   test('a saw of 100 mV into a cell, alone and into 10 kΩ and 1 nF', async () => {
