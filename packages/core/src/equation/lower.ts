@@ -5,7 +5,7 @@ import type { Equations, StateDeclaration } from './declare.ts';
 import { tangent } from './differentiate.ts';
 import { constant, type Expression, leaf } from './expression.ts';
 import { type Hoister, hoister } from './hoist.ts';
-import { withSharedNodes } from './node.ts';
+import { type EquationNode, withSharedNodes } from './node.ts';
 import type { Crossing, Group, Output, Program } from './program.ts';
 import { substitute } from './substitute.ts';
 import { variabilityOf } from './variability.ts';
@@ -92,7 +92,7 @@ class Lowering {
   private linear(index: number, { symbol, slope }: StateDeclaration): Group | undefined {
     const variability = variabilityOf();
     const rate = tangent(slope, new Map([[symbol, constant(1)]]), symbol.dimension);
-    if (variability(rate) === 'sample') return undefined;
+    if (variability(rate) === 'sample' || jumpsBy(slope, symbol)) return undefined;
     const drive = substitute(slope, new Map([[symbol, constant(0, symbol.dimension)]]));
     return {
       kind: 'linear',
@@ -182,3 +182,16 @@ class Lowering {
     );
   }
 }
+
+/** Whether an expression may jump where a leaf passes some value: then a constant derivative tells nothing. */
+function jumpsBy(root: EquationNode, symbol: Expression): boolean {
+  const seen = new Set<EquationNode>();
+  const visit = (node: EquationNode): boolean => {
+    if (seen.has(node)) return false;
+    seen.add(node);
+    return jumps.has(node.op) ? dependsOn(node, symbol) : node.args.some(visit);
+  };
+  return visit(root);
+}
+
+const jumps: ReadonlySet<string> = new Set(['lt', 'le', 'eq', 'floor']);

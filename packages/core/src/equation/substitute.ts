@@ -3,7 +3,10 @@ import { constant, Expression } from './expression.ts';
 import { cos, exp, exp2, floor, log, select, sin, sqrt, tanh } from './functions.ts';
 import { type EquationNode, internNode } from './node.ts';
 
-/** The expression with some of its leaves replaced, folded anew where that makes terms constant. */
+/**
+ * The expression with some of its leaves replaced, folded anew where that makes terms constant.
+ * The unknown of an implicit equation is its own: inside that equation it stays.
+ */
 export function substitute<T extends EquationNode>(
   root: T,
   replacements: ReadonlyMap<Expression, Expression>,
@@ -12,13 +15,24 @@ export function substitute<T extends EquationNode>(
   const visit = (node: EquationNode): EquationNode => {
     let image = known.get(node);
     if (image === undefined) {
-      const args = node.args.map(visit);
+      const own = node.op === 'solve' ? (node.args[0] as Expression) : undefined;
+      const args =
+        own !== undefined && replacements.has(own)
+          ? node.args.map((arg) => substitute(arg, without(replacements, own)))
+          : node.args.map(visit);
       image = args.every((arg, index) => arg === node.args[index]) ? node : rebuild(node, args);
       known.set(node, image);
     }
     return image;
   };
   return visit(root) as T;
+}
+
+function without(
+  replacements: ReadonlyMap<Expression, Expression>,
+  leaf: Expression,
+): ReadonlyMap<Expression, Expression> {
+  return new Map([...replacements].filter(([key]) => key !== leaf));
 }
 
 function rebuild(node: EquationNode, args: readonly EquationNode[]): EquationNode {

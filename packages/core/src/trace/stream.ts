@@ -2,6 +2,7 @@ import { breather } from '../engine/breathe.ts';
 import { Run, requireGoing } from '../engine/run.ts';
 import { type RunOptions, readLength, readOptions } from '../engine/run-options.ts';
 import type { Patch } from '../patch/patch.ts';
+import { TailpairError } from '../quantity/error.ts';
 import { requireWhole } from '../quantity/guard.ts';
 import { type ProbeTraces, probeTraces } from './probe-traces.ts';
 
@@ -24,6 +25,8 @@ export async function* stream<const Output extends string, const Probe extends O
   options: StreamOptions<Probe>,
 ): AsyncGenerator<ProbeTraces<Probe>, void, undefined> {
   const read = readOptions(options);
+  if (options.probes.length === 0)
+    throw new TailpairError('value-range', 'name at least one output to be recorded', { where: 'probes' });
   const piece = requireWhole(options.piece ?? 4096, { where: 'piece', min: 1 });
   const run = new Run(patch, options.probes, read);
   const count =

@@ -1,5 +1,6 @@
 import { dependsOn } from '../coupling.ts';
 import type { EquationNode } from '../node.ts';
+import { solveScalar } from '../solve-scalar.ts';
 import {
   addJets,
   type BinaryJet,
@@ -43,7 +44,6 @@ const binary: Readonly<Record<string, BinaryJet>> = {
   div: divJets,
 };
 
-const mostSteps = 60;
 /** Newton steps after the value has settled: each doubles the number of right coefficients. */
 const polishing = 3;
 
@@ -116,7 +116,7 @@ export class JetTape {
       if (dependsOn(inner, unknown)) inner.args.forEach(search);
       else visit(inner);
     };
-    [node.args[2]!, node.args[3]!].forEach(search);
+    node.args.slice(2).forEach(search);
   }
 
   private step(node: EquationNode, done: Set<EquationNode>): Step {
@@ -178,18 +178,14 @@ export class JetTape {
     }
   }
 
-  /** An implicit equation: Newton's method on whole jets. */
+  /** An implicit equation: its value as samples get it, then Newton's method on the whole jet. */
   private solve(node: EquationNode, done: Set<EquationNode>): Step {
     const w = this.work;
-    const [unknown, guess, residual, slope] = node.args as [
-      EquationNode,
-      EquationNode,
-      EquationNode,
-      EquationNode,
-    ];
+    const terms = node.args.slice(2);
     const inner: Step[] = [];
-    this.lay([residual, slope], inner, new Set(done));
-    const [x, start, r, s] = [unknown, guess, residual, slope].map((it) => this.rows.get(it)!) as [
+    this.lay(terms, inner, new Set(done));
+    const [x, start, r, s, c] = node.args.map((arg) => this.rows.get(arg)!) as [
+      number,
       number,
       number,
       number,
@@ -198,15 +194,18 @@ export class JetTape {
     const to = this.rows.get(node)!;
     const scratch = w.length - jetLength;
     return (side) => {
-      copyJet(w, x, start);
-      let left = mostSteps;
-      while (left > 0) {
+      w.fill(0, x, x + jetLength);
+      w[x] = solveScalar(w[start]!, (value, out) => {
+        w[x] = value;
+        for (const step of inner) step(side);
+        out[0] = w[r]!;
+        out[1] = w[s]!;
+        out[2] = w[c]!;
+      });
+      for (let count = 0; count < polishing; count++) {
         for (const step of inner) step(side);
         divJets(w, scratch, r, s);
         subJets(w, x, x, scratch);
-        left -= 1;
-        const settled = Math.abs(w[scratch]!) <= 1e-9 * Math.abs(w[x]!) || w[scratch] === 0;
-        if (settled && left > polishing) left = polishing;
       }
       copyJet(w, to, x);
     };

@@ -1,6 +1,6 @@
 import { dependsOn } from '../coupling.ts';
 import type { EquationNode } from '../node.ts';
-import { closeEnough, mostSteps } from '../solve-scalar.ts';
+import { closeEnough, mostSteps, smallest } from '../solve-scalar.ts';
 
 /** Gives a leaf its text in the generated source. */
 export type LeafText = (leaf: EquationNode) => string;
@@ -137,15 +137,12 @@ export class Emitter {
     const body = new Emitter([], this.leafText, { outer: this, unknown });
     body.names.set(unknown, root);
     const terms = [residual, slope, curvature].map((term) => body.text(term));
-    const step = this.fresh();
+    const [step, least] = [this.fresh(), this.fresh()];
     this.lines.push(
-      `let ${root} = ${start};`,
+      `let ${root} = ${start}, ${step} = NaN, ${least} = Infinity;`,
       'for (let i = 0; ; i++) {',
       ...body.lines.map((line) => `  ${line}`),
-      ...halleyLines(terms as [string, string, string], step),
-      `  ${root} -= ${step};`,
-      `  if (Math.abs(${step}) <= ${closeEnough} * Math.abs(${root}) || ${step} === 0) break;`,
-      `  if (i === ${mostSteps}) { ${root} = NaN; break; }`,
+      ...searchLines(terms as [string, string, string], { root, step, least }).map((line) => `  ${line}`),
       '}',
     );
     this.names.set(node, root);
@@ -153,13 +150,23 @@ export class Emitter {
   }
 }
 
-/** The text of `halleyStep`, so that the loop calls nothing. */
-function halleyLines([residual, slope, curvature]: [string, string, string], step: string): string[] {
+/** The text of one turn of `solveScalar`, so that the loop calls nothing. */
+function searchLines(
+  [residual, slope, curvature]: [string, string, string],
+  { root, step, least }: { root: string; step: string; least: string },
+): string[] {
   return [
-    `  const r = ${residual}, d = ${slope}, q = d * d;`,
-    `  const b = q - 0.5 * r * ${curvature};`,
+    `const r = ${residual}, a = Math.abs(r);`,
+    `if (Math.abs(${step}) <= ${smallest} && a > 0.5 * ${least}) break;`,
+    `if (a < ${least}) {`,
+    `  const d = ${slope}, q = d * d, b = q - 0.5 * r * ${curvature};`,
+    `  ${least} = a;`,
     // Comparisons: the engine's Math.min and Math.max cost more than the whole step.
-    `  const ${step} = r === 0 ? 0 : r * d / (b < 0.5 * q ? 0.5 * q : b > 2 * q ? 2 * q : b);`,
+    `  ${step} = r === 0 ? 0 : r * d / (b < 0.5 * q ? 0.5 * q : b > 2 * q ? 2 * q : b);`,
+    `  ${root} -= ${step};`,
+    `  if (Math.abs(${step}) <= ${closeEnough} * Math.abs(${root}) || ${step} === 0) break;`,
+    `} else { ${step} *= 0.5; ${root} += ${step}; }`,
+    `if (i === ${mostSteps - 1}) { ${root} = NaN; break; }`,
   ];
 }
 
