@@ -62,12 +62,13 @@ describe('harmonics', () => {
     );
     expect(() => harmonics(triangle, { fundamental: '4 kHz', highest: 6 })).toThrowError(/at most 5/);
   });
-  test('refuses a record without a fundamental', () => {
-    expect(() =>
-      thd(
-        record(() => 0),
-        { fundamental: '1 kHz' },
-      ),
-    ).toThrowError(expect.objectContaining({ code: 'record-invalid' }));
+  test.each<[string, (time: number) => number]>([
+    ['silence', () => 0],
+    ['a steady voltage, whose fundamental is rounding', () => 1],
+    ['another tone', (time) => Math.sin(turn(300, time))],
+  ])('refuses %s, as there is no fundamental', (_, signal) => {
+    expect(() => thd(record(signal), { fundamental: '1 kHz' })).toThrowError(
+      expect.objectContaining({ code: 'record-invalid' }),
+    );
   });
 });

@@ -6,6 +6,7 @@ import { accompany } from './accompany.ts';
 import { decibels } from './decibels.ts';
 import { fitLines } from './fit-lines.ts';
 import { type Frequency, hertz } from './frequency.ts';
+import { peak } from './peak.ts';
 
 /** What to measure harmonics of. */
 export interface HarmonicsOptions {
@@ -32,6 +33,9 @@ export interface Harmonic {
 /** Harmonics beyond those asked for that are considered, so that they bias nothing. */
 const spareHarmonics = 256;
 
+/** Share of the peak below which a fitted tone is rounding and nothing else. */
+const rounding = 1e-12;
+
 /**
  * Table of the harmonics of a trace, from the fundamental up to the order asked for. Harmonics above
  * that order are fitted along with them, so that they bias nothing on a record of no whole number of
@@ -53,10 +57,10 @@ export function harmonics(trace: Trace, options: HarmonicsOptions): readonly Har
   const lines = accompany(trace, multiples.slice(0, highest), multiples.slice(highest));
   const { tones } = fitLines(trace, lines, where);
   const reference = tones[0]!.amplitude;
-  if (reference === 0) {
+  if (!(reference > rounding * peak(trace))) {
     throw new TailpairError(
       'record-invalid',
-      `${trace.name} has nothing at the fundamental, ${formatQuantity(fundamental, 'Hz')}`,
+      `${trace.name} has nothing at the fundamental, ${formatQuantity(fundamental, 'Hz')}; look at its frequency and level`,
       { where },
     );
   }

@@ -111,7 +111,12 @@ function checkOutputs(
   for (const [name, { quantity }] of Object.entries(outputs)) {
     const value = written[name];
     if (!(value instanceof Expression))
-      throw wrong(kind, `the equations give nothing for the output ${name}`);
+      throw wrong(
+        kind,
+        value === undefined
+          ? `the equations give nothing for the output ${name}`
+          : `the equations give the ${typeof value} ${String(value)} for the output ${name}; give a quantity, a fixed one by constant(5, dimensions.voltage)`,
+      );
     const wanted = portDimension(quantity);
     if (!sameDimension(value.dimension, wanted)) {
       throw new TailpairError(

@@ -1,6 +1,7 @@
 import type { Clock } from '../equation/kernel/kernel.ts';
 import type { Patch } from '../patch/patch.ts';
 import { TailpairError } from '../quantity/error.ts';
+import { formatQuantity } from '../quantity/format-quantity.ts';
 import { type Assembly, type AssemblyOptions, assemble, type CompiledBlock, type Stage } from './assemble.ts';
 import type { OutputBuffers } from './output-buffers.ts';
 
@@ -70,7 +71,7 @@ export class Machine {
     const time = (this.clock.base + first) / this.clock.rate;
     throw new TailpairError(
       'not-finite',
-      `became ${values[first]} ${unit} at ${time} s; its equation has no finite value there, so look at the block's inputs and part values`,
+      `became ${values[first]} ${unit} at ${formatQuantity(time, 's', 9)}; its equation has no finite value there, so look at the block's inputs and part values`,
       { where: name },
     );
   }

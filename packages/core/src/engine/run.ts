@@ -1,5 +1,6 @@
 import type { Patch } from '../patch/patch.ts';
 import { TailpairError } from '../quantity/error.ts';
+import { formatQuantity } from '../quantity/format-quantity.ts';
 import { correctedSignal } from './corrected-path.ts';
 import type { CorrectedSignal } from './corrected-signal.ts';
 import { CorrectionKernel } from './correction-kernel.ts';
@@ -85,5 +86,6 @@ export class Run {
 
 /** Throws where the run is to be stopped. */
 export function requireGoing(signal: { readonly aborted: boolean } | undefined, seconds: number): void {
-  if (signal?.aborted) throw new TailpairError('aborted', `the run was stopped at ${seconds} s`);
+  if (signal?.aborted)
+    throw new TailpairError('aborted', `the run was stopped at ${formatQuantity(seconds, 's')}`);
 }

@@ -3,11 +3,12 @@ import { TailpairError } from '../quantity/error.ts';
 import {
   asFactor,
   constant,
-  type Expression,
+  Expression,
   isConstant,
   leaf,
   type Operand,
   operandIn,
+  withUnit,
 } from './expression.ts';
 import { select } from './functions.ts';
 import { withSharedNodes } from './node.ts';
@@ -188,7 +189,21 @@ export function held(initial: Operand): Expression {
  * @param change what is written, as a list of {@link set}
  */
 export function onCrossing(expression: Expression, change: () => readonly Assignment[]): void {
-  record('onCrossing').crossings.push({ expression, changes: change() });
+  const into = record('onCrossing');
+  if (!(expression instanceof Expression)) {
+    throw new TailpairError(
+      'declaration',
+      "onCrossing takes a quantity that rises through zero, such as v.sub('1 V'), not a condition",
+    );
+  }
+  const changes = change();
+  if (!Array.isArray(changes)) {
+    throw new TailpairError(
+      'declaration',
+      `onCrossing at ${expression}: the change must return a list, such as () => [set(stage, 1)]`,
+    );
+  }
+  into.crossings.push({ expression, changes });
 }
 
 /** Writes a state or a held quantity in an event. */
@@ -201,10 +216,7 @@ export function set(target: Expression, value: Operand): Assignment {
   }
   const written = operandIn(target.dimension, value);
   if (!sameDimension(target.dimension, written.dimension)) {
-    throw new TailpairError(
-      'dimension',
-      `set: ${target} is in ${formatDimension(target.dimension)}, ${written} is in ${formatDimension(written.dimension)}`,
-    );
+    throw new TailpairError('dimension', `set: ${withUnit(target)}, ${withUnit(written)}`);
   }
   return { target, value: written };
 }

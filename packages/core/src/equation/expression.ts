@@ -122,12 +122,12 @@ export class Expression implements EquationNode {
 
   /** Whether this is above `other`. */
   gt(other: Operand): Condition {
-    return this.alike(other, 'lt').lt(this);
+    return this.alike(other, 'gt').lt(this);
   }
 
   /** Whether this is at or above `other`. */
   ge(other: Operand): Condition {
-    return this.alike(other, 'le').le(this);
+    return this.alike(other, 'ge').le(this);
   }
 
   /** Whether this equals `other` exactly: for whole numbers such as the stage of a sequence. */
@@ -140,16 +140,38 @@ export class Expression implements EquationNode {
     return printExpression(this);
   }
 
+  /**
+   * Text where text is asked for. A number is refused: `v * 2` or `v > 0` in place of `v.mul(2)` or
+   * `v.gt('0 V')` would silently make nonsense, as a quantity has no value until it runs.
+   *
+   * @throws TailpairError `declaration`
+   */
+  [Symbol.toPrimitive](hint: string): string {
+    if (hint === 'string') return this.toString();
+    throw new TailpairError(
+      'declaration',
+      `${this} has no value while equations are written; use its operations: add, sub, mul, div, lt, gt`,
+    );
+  }
+
   private alike(other: Operand, op: string): Expression {
     const right = operandIn(this.dimension, other);
     if (!sameDimension(this.dimension, right.dimension)) {
       throw new TailpairError(
         'dimension',
-        `${op}: ${this} is in ${formatDimension(this.dimension)}, ${right} is in ${formatDimension(right.dimension)}; both sides must have one dimension`,
+        `${op}: ${withUnit(this)}, ${withUnit(right)}; both sides must have one dimension`,
       );
     }
     return right;
   }
+}
+
+/** An expression and what it is in, for messages. */
+export function withUnit(expression: Expression): string {
+  const unit = isRatio(expression.dimension)
+    ? 'a bare number'
+    : `in ${formatDimension(expression.dimension)}`;
+  return `${expression} is ${unit}`;
 }
 
 /** A fixed quantity, in SI base units. */

@@ -6,8 +6,8 @@ import {
   sameDimension,
 } from '../quantity/dimension.ts';
 import { TailpairError } from '../quantity/error.ts';
-import type { Condition } from './condition.ts';
-import { asFactor, Expression, type Operand, operation } from './expression.ts';
+import { Condition } from './condition.ts';
+import { asFactor, Expression, type Operand, operation, withUnit } from './expression.ts';
 import { internNode, type NumericOp } from './node.ts';
 
 function ofRatio(op: NumericOp, operand: Operand, fold: (value: number) => number): Expression {
@@ -50,6 +50,12 @@ export function sqrt(x: Operand): Expression {
 
 /** `whenTrue` where the condition holds, else `whenFalse`; both of one dimension. */
 export function select(condition: Condition, whenTrue: Operand, whenFalse: Operand): Expression {
+  if (!(condition instanceof Condition)) {
+    throw new TailpairError(
+      'declaration',
+      `select: ${String(condition)} is no condition; compare two quantities, such as v.gt('0 V')`,
+    );
+  }
   const [yes, no] = alike(whenTrue, whenFalse);
   if (condition.op === 'true') return yes;
   if (condition.op === 'false' || yes === no) return no;
@@ -63,7 +69,7 @@ function alike(whenTrue: Operand, whenFalse: Operand): [Expression, Expression] 
   if (!sameDimension(yes.dimension, no.dimension)) {
     throw new TailpairError(
       'dimension',
-      `select: ${yes} is in ${formatDimension(yes.dimension)}, ${no} is in ${formatDimension(no.dimension)}; both choices must have one dimension`,
+      `select: ${withUnit(yes)}, ${withUnit(no)}; both choices must have one dimension`,
     );
   }
   return [yes, no];

@@ -1,5 +1,6 @@
 import type { Block, Inputs, Outputs } from '../block/kind.ts';
 import type { Surroundings } from '../block/surroundings.ts';
+import { TailpairError } from '../quantity/error.ts';
 import { collectFaults } from './collect-faults.ts';
 import { loadingWarnings } from './loading.ts';
 import type { PlacedBlock, PlacedWire, Warning } from './placed.ts';
@@ -62,7 +63,13 @@ export function patch<const B extends Blocks>(
   return collectFaults((faults) => {
     const surroundings = readSurroundings(parts, faults);
     const blocks = readBlocks(parts.blocks, surroundings, faults);
-    const wires = readWires(blocks, connect(handles(blocks) as never), faults);
+    const drawn = connect(handles(blocks) as never);
+    if (!Array.isArray(drawn)) {
+      throw new TailpairError('value-kind', 'must return a list of wires, such as [wire(a.out, b.in)]', {
+        where: 'the wiring of the patch',
+      });
+    }
+    const wires = readWires(blocks, drawn, faults);
     return {
       title: parts.title ?? '',
       surroundings,

@@ -15,7 +15,11 @@ export function readBlocks(
   surroundings: Surroundings,
   faults: TailpairError[],
 ): PlacedBlock[] {
-  return Object.entries(blocks).map(([name, { kind, given }]) => {
+  return Object.entries(blocks).map(([name, block]) => {
+    if (typeof block?.kind !== 'function') {
+      throw new TailpairError('value-kind', 'is no block; call its kind, such as load()', { where: name });
+    }
+    const { kind, given } = block;
     const { declaration } = kind;
     if (!namePattern.test(name)) {
       faults.push(
