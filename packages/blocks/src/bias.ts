@@ -22,6 +22,13 @@ export const bias = defineBlock({
       doc: 'junctions between pin and rail: 1, or 2 for a stacked mirror',
     }),
   },
+  limits: () => ({ out: { min: '0 A' } }),
+  potentials: ({ pin, out, diodeCurrent, diodeDrops, temperature, thermalVoltage, supplyNegative }) => {
+    const arriving = pin.current.add(pin.drive);
+    if (!isZero(pin.conductance)) return { pin: arriving.sub(out).div(pin.conductance) };
+    const saturation = saturationCurrent(diodeCurrent, temperature, thermalVoltage);
+    return { pin: supplyNegative.add(diodeDrops.mul(thermalVoltage).mul(log(out.div(saturation).add(1)))) };
+  },
   equations: ({ pin, diodeCurrent, diodeDrops, temperature, thermalVoltage, supplyNegative }) => {
     const arriving = pin.current.add(pin.drive);
     if (isZero(pin.conductance)) return { out: arriving.max('0 A') };

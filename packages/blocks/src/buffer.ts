@@ -13,6 +13,7 @@ export const buffer = defineBlock({
     headroomNegative: volts('1.5 V', { min: '0 V', doc: 'how close the output comes to the negative rail' }),
   },
   requires: (p) => [hasSwing(p)],
+  limits: (p) => ({ out: swing(p) }),
   equations: ({ in: input, gain, ...rails }) => {
     const { min, max } = swing(rails);
     return { out: input.mul(gain).clamp(min, max) };

@@ -10,5 +10,9 @@ export const currentDrive = defineBlock({
     resistance: ohms('10k', { doc: 'resistor that sets the current' }),
     max: amperes('1 mA', { min: '0 A', doc: 'largest current it gives' }),
   },
+  limits: ({ resistance, max }) => ({
+    in: { min: '0 V', max: max.mul(resistance) },
+    out: { min: '0 A', max },
+  }),
   equations: ({ in: control, resistance, max }) => ({ out: control.div(resistance).clamp('0 A', max) }),
 });

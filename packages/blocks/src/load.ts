@@ -22,6 +22,7 @@ export const load = defineBlock({
   },
   resistances: ({ resistance }) => ({ out: resistance }),
   requires: (p) => [hasSwing(p)],
+  limits: (p) => ({ out: swing(p) }),
   equations: ({ in: arriving, resistance, capacitance, ...rails }) => {
     const { min, max } = swing(rails);
     if (isZero(capacitance)) return { out: arriving.mul(resistance).clamp(min, max) };

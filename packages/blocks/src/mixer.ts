@@ -14,6 +14,7 @@ export const mixer = defineBlock({
     headroomNegative: volts('1.5 V', { min: '0 V', doc: 'how close the output comes to the negative rail' }),
   },
   requires: (p) => [hasSwing(p)],
+  limits: (p) => ({ out: swing(p) }),
   equations: ({ sum, feedback, ...rails }) => {
     const { min, max } = swing(rails);
     return { out: sum.current.add(sum.drive).mul(feedback).neg().clamp(min, max) };

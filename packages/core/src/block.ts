@@ -23,6 +23,7 @@ export type { EquationNode, LeafRole, LogicOp, NumericOp } from './equation/node
 export { cos, exp, exp2, floor, log, select, sin, sqrt, tanh } from './equation/functions.ts';
 export { solve } from './equation/solve.ts';
 export { type BlockDefinition, defineBlock } from './block/define-block.ts';
+export { type DescribedEquations, describeEquations, type EquationLine } from './block/describe-equations.ts';
 export type {
   Block,
   BlockKind,
@@ -31,12 +32,14 @@ export type {
   Inputs,
   KindDeclaration,
   NodeSymbols,
+  OperatingSymbols,
   Outputs,
   ParameterSymbol,
   ParameterSymbols,
   Parameters,
   PlainKernel,
   PlainKernelContext,
+  PortLimits,
   PortSymbol,
   Requirement,
 } from './block/kind.ts';

@@ -23,6 +23,13 @@ export {
 export type { PlacedBlock, PlacedWire, Warning } from './patch/placed.ts';
 export { type InputHandle, type OutputHandle, type Via, type Wire, wire } from './patch/wire.ts';
 export { type Schedule, schedule } from './schedule/schedule.ts';
+export type { TransconductancePoint } from './engine/operating-block.ts';
+export {
+  type OperatingPoint,
+  type OperatingPointOptions,
+  operatingPoint,
+  type PortPoint,
+} from './engine/operating-point.ts';
 export type { RunOptions } from './engine/run-options.ts';
 export { type CutOptions, cut } from './trace/cut.ts';
 export type { ProbeTraces } from './trace/probe-traces.ts';

@@ -61,10 +61,18 @@ export function parameterSymbols(
   return { leaves, values };
 }
 
-/** Writes down the equations of a kind as they stand for the given wiring and words. */
-export function bindEquations(declaration: KindDeclaration, request: BindingRequest): BoundEquations {
+/** The symbols a kind is written in for one way of wiring it, by the names its author uses. */
+export interface BoundSymbols extends Omit<BoundEquations, 'equations'> {
+  readonly symbols: Readonly<Record<string, unknown>>;
+}
+
+/** Makes the symbols of a kind for the given wiring and words. */
+export function bindSymbols(
+  declaration: KindDeclaration,
+  { words, wiring: wiringOf }: Pick<BindingRequest, 'words' | 'wiring'>,
+): BoundSymbols {
   const surroundings = surroundingSymbols();
-  const { leaves, values } = parameterSymbols(declaration, request.words);
+  const { leaves: parameters, values } = parameterSymbols(declaration, words);
   const inputs: InputLeaf[] = [];
   const conductances = new Map<string, Expression>();
 
@@ -92,18 +100,23 @@ export function bindEquations(declaration: KindDeclaration, request: BindingRequ
 
   const symbols: Record<string, unknown> = { ...values, ...surroundings };
   for (const [port, { quantity, symbol = port }] of Object.entries(declaration.inputs)) {
-    const wiring = request.wiring(port);
+    const wiring = wiringOf(port);
     if (quantity === 'node') symbols[symbol] = nodeSymbols(port, wiring);
     else {
       const dimension = portDimension(quantity);
       symbols[symbol] = wiring.direct ? signal(port, symbol, 'direct', dimension) : constant(0, dimension);
     }
   }
+  return { symbols, inputs, conductances, parameters, surroundings };
+}
+
+/** Writes down the equations of a kind as they stand for the given wiring and words. */
+export function bindEquations(declaration: KindDeclaration, request: BindingRequest): BoundEquations {
+  const { symbols, ...bound } = bindSymbols(declaration, request);
   const write = declaration.equations as (symbols: unknown) => Readonly<Record<string, Expression>>;
-  const bound = { parameters: leaves, surroundings, conductances };
   const equations = recordEquations(
     () => write(symbols),
     (expression) => request.decide(expression, bound),
   );
-  return { equations, inputs, ...bound };
+  return { equations, ...bound };
 }

@@ -1,16 +1,16 @@
 import { Expression } from '../equation/expression.ts';
 import { formatDimension, sameDimension } from '../quantity/dimension.ts';
 import { TailpairError } from '../quantity/error.ts';
-import { bindEquations, type InputWiring, parameterSymbols } from './bind-equations.ts';
+import { type InputWiring, parameterSymbols } from './bind-equations.ts';
+import { checkOperation } from './check-operation.ts';
 import type { KindDeclaration } from './kind.ts';
 import { readParameter } from './parameter.ts';
 import { portDimension } from './port.ts';
 import { reservedNames, surroundingSymbols } from './surroundings.ts';
+import { equationVariants, wordings } from './variants.ts';
 
 const namePattern = /^[a-z][A-Za-z0-9]*$/;
 const kindPattern = /^[a-z][a-z0-9]*(-[a-z0-9]+)*$/;
-/** A kind that asks more independent set-up questions than this is refused rather than half checked. */
-const mostQuestions = 6;
 
 /** Checks a declaration whole: names, defaults, and the equations in every variant. */
 export function checkDeclaration(declaration: KindDeclaration): void {
@@ -25,7 +25,7 @@ export function checkDeclaration(declaration: KindDeclaration): void {
     throw wrong(kind, 'a kind has either equations or a plain kernel, and exactly one of them');
   }
   checkResistances(declaration);
-  if (equations !== undefined) for (const words of wordings(declaration)) checkVariants(declaration, words);
+  for (const words of wordings(declaration)) checkVariants(declaration, words);
 }
 
 function wrong(kind: string, message: string): TailpairError {
@@ -57,17 +57,6 @@ function checkNames({ kind, inputs, outputs, params }: KindDeclaration): void {
   if (notSignal) throw wrong(kind, `${notSignal[0]} cannot be a node; an output is a voltage or a current`);
 }
 
-/** Every combination of words of the choice parameters. */
-function wordings({ params }: KindDeclaration): Record<string, string>[] {
-  return Object.entries(params).reduce<Record<string, string>[]>(
-    (known, [name, parameter]) =>
-      parameter.form === 'choice'
-        ? known.flatMap((words) => parameter.choices.map((word) => ({ ...words, [name]: word })))
-        : known,
-    [{}],
-  );
-}
-
 /** Traces the equations for all answers their set-up questions can get, wired and unwired. */
 function checkVariants(declaration: KindDeclaration, words: Record<string, string>): void {
   const wirings: ((port: string) => InputWiring)[] = [
@@ -78,29 +67,12 @@ function checkVariants(declaration: KindDeclaration, words: Record<string, strin
     },
   ];
   for (const wiring of wirings) {
-    const pending: boolean[][] = [[]];
-    for (let answers = pending.pop(); answers !== undefined; answers = pending.pop()) {
-      let asked = 0;
-      const given = answers;
-      const { equations } = bindEquations(declaration, {
-        words,
-        wiring,
-        decide: () => {
-          const answer = given[asked] ?? false;
-          if (asked >= given.length)
-            pending.push([...given, ...Array(asked - given.length).fill(false), true]);
-          asked += 1;
-          if (asked > mostQuestions) {
-            throw wrong(
-              declaration.kind,
-              `more than ${mostQuestions} set-up questions (isZero) in one variant`,
-            );
-          }
-          return answer;
-        },
-      });
-      checkOutputs(declaration, equations.outputs);
+    if (declaration.equations !== undefined) {
+      for (const { bound } of equationVariants(declaration, words, wiring)) {
+        checkOutputs(declaration, bound.equations.outputs);
+      }
     }
+    checkOperation(declaration, { words, wiring });
   }
 }
 

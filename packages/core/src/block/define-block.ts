@@ -7,11 +7,13 @@ import type {
   GivenParameters,
   Inputs,
   KindDeclaration,
+  OperatingSymbols,
   Outputs,
   ParameterSymbols,
   Parameters,
   PlainKernel,
   PlainKernelContext,
+  PortLimits,
   Requirement,
 } from './kind.ts';
 
@@ -26,6 +28,15 @@ export interface BlockDefinition<I extends Inputs, O extends Outputs, P extends 
   readonly params: P;
   /** Input resistance of voltage inputs (infinite where left out) and source resistance of outputs (0 where left out). */
   readonly resistances?: (values: ParameterSymbols<P>) => { readonly [K in keyof I | keyof O]?: Expression };
+  /**
+   * Limits within which ports work as meant, by port: what is left to them is the margin of an operating
+   * point. They may depend on other ports. Nothing is limited by them: that is for the equations.
+   */
+  readonly limits?: (symbols: OperatingSymbols<I, O, P>) => {
+    readonly [K in keyof I | keyof O]?: PortLimits;
+  };
+  /** Voltage of node inputs, for operating points; 0 V, a virtual ground, where left out. */
+  readonly potentials?: (symbols: OperatingSymbols<I, O, P>) => { readonly [K in keyof I]?: Expression };
   /** Rules between parameters. */
   readonly requires?: (values: ParameterSymbols<P>) => readonly Requirement[];
   /** The physics, in continuous time. */

@@ -1,5 +1,5 @@
 import type { Condition } from '../equation/condition.ts';
-import type { Expression } from '../equation/expression.ts';
+import type { Expression, Operand } from '../equation/expression.ts';
 import type { ChoiceParameter, NumberParameter, Parameter } from './parameter.ts';
 import type { PortDeclaration, PortQuantity } from './port.ts';
 import type { SurroundingSymbols } from './surroundings.ts';
@@ -39,6 +39,20 @@ export type ParameterSymbols<P extends Parameters> = {
 export type EquationSymbols<I extends Inputs, P extends Parameters> = {
   readonly [K in keyof I as I[K]['symbol'] extends string ? I[K]['symbol'] : K]: PortSymbol<I[K]['quantity']>;
 } & ParameterSymbols<P>;
+
+/** What limits and potentials of ports are written in: all that equations see, and the outputs as they are. */
+export type OperatingSymbols<I extends Inputs, O extends Outputs, P extends Parameters> = EquationSymbols<
+  I,
+  P
+> & {
+  readonly [K in keyof O as O[K]['symbol'] extends string ? O[K]['symbol'] : K]: Expression;
+};
+
+/** Limits within which a port works as meant; of a node, those of the current into it. */
+export interface PortLimits {
+  readonly min?: Operand;
+  readonly max?: Operand;
+}
 
 /** What a script may give for the parameters of a kind; all have a value of their own. */
 export type GivenParameters<P extends Parameters> = {
@@ -83,6 +97,10 @@ export interface KindDeclaration {
   readonly params: Parameters;
   /** Input and source resistances of ports, given the parameters. */
   readonly resistances?: (values: never) => Readonly<Record<string, Expression | undefined>>;
+  /** Limits of ports, and voltages of node inputs, at an operating point. */
+  readonly limits?: (symbols: never) => Readonly<Record<string, PortLimits | undefined>>;
+  /** Voltages of node inputs, for operating points. */
+  readonly potentials?: (symbols: never) => Readonly<Record<string, Expression | undefined>>;
   /** Rules between parameters. */
   readonly requires?: (values: never) => readonly Requirement[];
   /** The physics, unless the kind is a plain kernel. */

@@ -1,6 +1,12 @@
 import { evaluate } from '../equation/evaluate.ts';
 import type { Expression } from '../equation/expression.ts';
-import { type BoundEquations, bindEquations, type InputWiring, parameterSymbols } from './bind-equations.ts';
+import {
+  type BindingRequest,
+  type BoundEquations,
+  bindEquations,
+  type InputWiring,
+  parameterSymbols,
+} from './bind-equations.ts';
 import type { KindDeclaration, Requirement } from './kind.ts';
 import { bindSurroundings, type Surroundings, surroundingSymbols } from './surroundings.ts';
 
@@ -24,24 +30,31 @@ export interface SetUpBlock {
 
 /** Writes down a block's equations with its values: the variant its parameters and wires ask for. */
 export function setUpBlock(declaration: KindDeclaration, setting: BlockSetting): SetUpBlock {
-  const words = wordsOf(setting.values);
-  const bind = ({
-    parameters,
-    surroundings,
-    conductances,
-  }: Pick<BoundEquations, 'parameters' | 'surroundings' | 'conductances'>): Map<Expression, number> => {
-    const bindings = bindSurroundings(surroundings, setting.surroundings);
-    for (const [name, symbol] of parameters) bindings.set(symbol, setting.values[name] as number);
-    for (const [port, symbol] of conductances) bindings.set(symbol, setting.conductance(port));
-    return bindings;
-  };
-  const bound = bindEquations(declaration, {
-    words,
-    wiring: setting.wiring,
-    decide: (expression, leaves) => evaluate(expression, bind(leaves)) === 0,
-  });
-  return { bound, bindings: bind(bound) };
+  const bound = bindEquations(declaration, bindingRequest(setting));
+  return { bound, bindings: bindLeaves(bound, setting) };
 }
+
+/** Values of the leaves that stand still during a run: parameters, surroundings, conductances of nodes. */
+export function bindLeaves(
+  { parameters, surroundings, conductances }: StillLeaves,
+  setting: BlockSetting,
+): Map<Expression, number> {
+  const bindings = bindSurroundings(surroundings, setting.surroundings);
+  for (const [name, symbol] of parameters) bindings.set(symbol, setting.values[name] as number);
+  for (const [port, symbol] of conductances) bindings.set(symbol, setting.conductance(port));
+  return bindings;
+}
+
+/** How a kind's symbols are asked for where it stands in a patch. */
+export function bindingRequest(setting: BlockSetting): BindingRequest {
+  return {
+    words: wordsOf(setting.values),
+    wiring: setting.wiring,
+    decide: (expression, leaves) => evaluate(expression, bindLeaves(leaves, setting)) === 0,
+  };
+}
+
+type StillLeaves = Pick<BoundEquations, 'parameters' | 'surroundings' | 'conductances'>;
 
 /**
  * Resistances of a block's ports in ohms, by port: an input not named is infinite, an output not

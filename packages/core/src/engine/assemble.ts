@@ -1,4 +1,4 @@
-import { type SetUpBlock, setUpBlock } from '../block/set-up.ts';
+import { type BlockSetting, type SetUpBlock, setUpBlock } from '../block/set-up.ts';
 import { findCorners } from '../equation/corners.ts';
 import type { Expression } from '../equation/expression.ts';
 import { EdgeList } from '../equation/kernel/edge-list.ts';
@@ -174,7 +174,12 @@ function takesEdges(block: PlacedBlock, { wires }: Patch, edged: ReadonlySet<str
 }
 
 function setUp(block: PlacedBlock, patch: Patch): SetUpBlock {
-  return setUpBlock(block.declaration, {
+  return setUpBlock(block.declaration, settingOf(block, patch));
+}
+
+/** How a block stands in its patch: its values, and what is wired to it. */
+export function settingOf(block: PlacedBlock, patch: Patch): BlockSetting {
+  return {
     values: plainValues(block.parameters),
     surroundings: patch.surroundings,
     wiring: (port) => ({
@@ -182,7 +187,7 @@ function setUp(block: PlacedBlock, patch: Patch): SetUpBlock {
       resistors: sourcesOf(patch, block, port, 'drive').length > 0,
     }),
     conductance: (port) => sourcesOf(patch, block, port, 'drive').reduce((sum, { gain }) => sum + gain, 0),
-  });
+  };
 }
 
 /** One thing that comes into an input. */
@@ -194,7 +199,12 @@ export interface Source {
 }
 
 /** What comes into a port: directly, through resistors, or (where `part` is left out) both. */
-function sourcesOf(patch: Patch, block: PlacedBlock, port: string, part?: 'direct' | 'drive'): Source[] {
+export function sourcesOf(
+  patch: Patch,
+  block: PlacedBlock,
+  port: string,
+  part?: 'direct' | 'drive',
+): Source[] {
   const into = ({ to, via }: PlacedWire): boolean =>
     to.block === block.name &&
     to.port === port &&

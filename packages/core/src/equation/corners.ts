@@ -25,6 +25,12 @@ export function findCorners(roots: readonly Expression[]): Expression[] {
 }
 
 /** Whether a vertex uses the unknown of an implicit equation: a branch of the search, not of the waveform. */
-function searched(node: EquationNode): boolean {
-  return node.role === 'unknown' || (node.op !== 'solve' && node.args.some(searched));
+function searched(root: EquationNode): boolean {
+  const seen = new Set<EquationNode>();
+  const visit = (node: EquationNode): boolean => {
+    if (seen.has(node)) return false;
+    seen.add(node);
+    return node.role === 'unknown' || (node.op !== 'solve' && node.args.some(visit));
+  };
+  return visit(root);
 }
